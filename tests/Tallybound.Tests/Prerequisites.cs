@@ -46,7 +46,7 @@ internal static class Prerequisites
     {
         try
         {
-            var start = new ProcessStartInfo(program) { RedirectStandardError = true, RedirectStandardOutput = true };
+            var start = new ProcessStartInfo(program) { UseShellExecute = false, RedirectStandardError = true, RedirectStandardOutput = true };
             foreach (string argument in arguments) start.ArgumentList.Add(argument);
             using Process process = Process.Start(start)!;
             process.StandardOutput.ReadToEnd();

@@ -31,6 +31,9 @@ public sealed record CorpusProfile
     /// a stored block; <c>raw</c> first, <c>bestPerSource</c> last. Codes that no source has are absent.</summary>
     public required IReadOnlyDictionary<string, long> Totals { get; init; }
 
+    /// <summary>Entropy figures added up over each source's first view; null when nothing was read.</summary>
+    public CorpusBounds? Bounds { get; init; }
+
     /// <summary>What the figures say in one sentence, with both sizes; null when nothing was read.</summary>
     public Verdict? Verdict { get; init; }
 
@@ -61,3 +64,10 @@ public sealed record CorpusQuantiles(double P05, double P25, double P50, double 
 /// <param name="Count">How many there are.</param>
 /// <param name="Names">Their names in ordinal order, at most 20.</param>
 public sealed record DuplicateSet(string Digest, long Bytes, long Count, IReadOnlyList<string> Names);
+
+/// <summary>Sums over sources of each one's entropy figures, every source's rounded to whole bits before it is added.</summary>
+/// <param name="Order0BoundBits">Static order-0 bound of each source by itself: no coder with one fixed table and no memory goes below it. Models are left out.</param>
+/// <param name="AdaptiveOrder0Bits">Adaptive cost of order 0: an upper figure that a real coder reaches, nothing left out.</param>
+/// <param name="AdaptiveOrder1Bits">The same with one symbol of context; a source without that order adds its raw bits. Null when no source has it.</param>
+/// <param name="AdaptiveOrder2Bits">The same with two symbols of context.</param>
+public sealed record CorpusBounds(long Order0BoundBits, long? AdaptiveOrder0Bits, long? AdaptiveOrder1Bits, long? AdaptiveOrder2Bits);

@@ -21,6 +21,9 @@ public sealed record ViewProfile
     /// <summary>Bits of the symbols sent plain: N·⌈log2 A⌉ and the bytes outside the view.</summary>
     public required long RawBits { get; init; }
 
+    /// <summary>Bits of the whole view as one stored table block, framing included; 0 when N = 0.</summary>
+    public required long StoredTotalBits { get; init; }
+
     /// <summary>Order-k figures, order 0 first; an order that N cannot support, or that was not counted, is absent. Empty when N = 0.</summary>
     public required IReadOnlyList<OrderProfile> Orders { get; init; }
 

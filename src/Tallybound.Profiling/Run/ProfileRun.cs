@@ -9,7 +9,8 @@ namespace Tallybound.Profiling.Run;
 /// <param name="Corpus">The corpus roll-up.</param>
 /// <param name="Run">Provenance.</param>
 /// <param name="Ledger">The open ledger, from which reports stream; the caller disposes of it.</param>
-public sealed record RunResult(bool Complete, CorpusProfile Corpus, RunRecord Run, RunLedger Ledger);
+/// <param name="KeptTallies">The counts themselves, source by source; null unless they were to be kept.</param>
+public sealed record RunResult(bool Complete, CorpusProfile Corpus, RunRecord Run, RunLedger Ledger, IEnumerable<TallyRow>? KeptTallies);
 
 /// <summary>Carries a frozen plan through: units, merge, finish, ledger, roll-up.</summary>
 public static class ProfileRun

@@ -1,4 +1,8 @@
 using Tallybound.Profiling.Run;
+using Tallybound.Reports.Csv;
+using Tallybound.Reports.Html;
+using Tallybound.Reports.Json;
+using Tallybound.Reports.Parquet;
 
 namespace Tallybound.Reports.Run;
 
@@ -9,5 +13,12 @@ public static class RunReport
     /// <param name="folder">The run folder.</param>
     /// <param name="result">The run.</param>
     /// <exception cref="IOException">A file cannot be written.</exception>
-    public static void Write(string folder, RunResult result) => throw new InvalidOperationException("Under construction.");
+    public static void Write(string folder, RunResult result)
+    {
+        ProfileDocument.WriteSchema(Path.Combine(folder, "profile.schema.json"));
+        ProfileDocument.Write(Path.Combine(folder, "profile.json"), result);
+        SourcesTable.Write(Path.Combine(folder, "sources.csv"), result.Ledger);
+        IndexPage.Write(Path.Combine(folder, "index.html"), result);
+        if (result.KeptTallies is { } tallies) TalliesTable.Write(Path.Combine(folder, "tallies.parquet"), tallies);
+    }
 }

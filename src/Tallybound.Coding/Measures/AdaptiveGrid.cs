@@ -8,17 +8,20 @@ namespace Tallybound.Coding.Measures;
 internal sealed class AdaptiveGrid
 {
     /// <summary>Terms of counts below this are kept. Small sources hardly pass it, and it is built in a fraction of a millisecond.</summary>
-    public const int Kept = 256;
+    public const int Kept = RisingFactorialSeries.From;
 
     private static readonly ConcurrentDictionary<int, AdaptiveGrid> s_grids = new();
 
     private readonly double[] _pairTerms, _contextTerms;   // [n × Size + j], natural logarithms
+    private readonly RisingFactorialSeries[] _pairSeries;
 
     private AdaptiveGrid(int alphabetSize)
     {
         AlphabetSize = alphabetSize;
         Size = BitOperations.Log2(BitOperations.RoundUpToPowerOf2((uint)alphabetSize)) + 1;
         ChoiceBits = BitOperations.Log2(BitOperations.RoundUpToPowerOf2((uint)Size));
+        _pairSeries = new RisingFactorialSeries[Size];
+        for (int j = 0; j < Size; j++) _pairSeries[j] = new RisingFactorialSeries(Alpha(j));
         _pairTerms = new double[Kept * Size];
         _contextTerms = new double[Kept * Size];
         for (int n = 1; n < Kept; n++)
@@ -46,15 +49,24 @@ internal sealed class AdaptiveGrid
     /// <summary>Adds times · [ln Γ(n+α)/Γ(α) - n ln n + n] for every α.</summary>
     public void AddPairs(long n, double times, Span<NeumaierSum> nats)
     {
-        if (n < Kept) AddKept(_pairTerms, n, times, nats);
-        else for (int j = 0; j < Size; j++) nats[j].Add(times * GammaFunction.RisingFactorialExcess(n, Alpha(j)));
+        if (n < Kept)
+        {
+            AddKept(_pairTerms, n, times, nats);
+            return;
+        }
+        double lnN = Math.Log(n), inverse = 1.0 / n;
+        for (int j = 0; j < _pairSeries.Length; j++) nats[j].Add(times * _pairSeries[j].At(lnN, inverse));
     }
 
     /// <summary>Adds times · [ln Γ(n+Aα)/Γ(Aα) - n ln n + n] for every α.</summary>
     public void AddContexts(long n, double times, Span<NeumaierSum> nats)
     {
-        if (n < Kept) AddKept(_contextTerms, n, times, nats);
-        else for (int j = 0; j < Size; j++) nats[j].Add(times * GammaFunction.RisingFactorialExcess(n, AlphabetSize * Alpha(j)));
+        if (n < Kept)
+        {
+            AddKept(_contextTerms, n, times, nats);
+            return;
+        }
+        for (int j = 0; j < Size; j++) nats[j].Add(times * GammaFunction.RisingFactorialExcess(n, AlphabetSize * Alpha(j)));
     }
 
     private void AddKept(double[] terms, long n, double times, Span<NeumaierSum> nats)

@@ -18,7 +18,7 @@ public sealed class ContextMeasures
     private long[] _both = new long[256];
     private NeumaierSum _informationBits;
     private double _meanBits, _squaresBits;
-    private long _predicted, _contexts, _pairs;
+    private long _predicted, _certain, _contexts, _pairs;
     private bool _foldsWanted = true;
 
     /// <summary>Measures for contexts of <paramref name="order"/> symbols.</summary>
@@ -36,7 +36,7 @@ public sealed class ContextMeasures
     }
 
     /// <summary>Symbols predicted so far, N_k; 0 until a context with counts came.</summary>
-    public long Predicted => _predicted;
+    public long Predicted => _predicted + _certain;
 
     /// <summary>Adds the next context.</summary>
     /// <param name="fold0">Counts in fold 0 of the symbols that followed this context, in ascending order of symbol; zeros and symbols that never came may be left out or in.</param>
@@ -47,6 +47,11 @@ public sealed class ContextMeasures
         if (fold0.Length != fold1.Length) throw new ArgumentException($"Fold 0 has {fold0.Length} symbols, fold 1 has {fold1.Length}; they must be aligned.", nameof(fold1));
         if (_grid is not null && fold0.Length > _alphabetSize)
             throw new ArgumentException($"The context has {fold0.Length} symbols; the alphabet has {_alphabetSize}.", nameof(fold0));
+        if (fold0.Length == 1)
+        {
+            AddOneSymbol(fold0, fold1);
+            return;
+        }
         if (_both.Length < fold0.Length) _both = new long[Math.Max(fold0.Length, 2 * _both.Length)];
         Span<long> both = _both.AsSpan(0, fold0.Length);
 
@@ -85,10 +90,12 @@ public sealed class ContextMeasures
     /// held-out figures are asked for after a <see cref="Reset"/> that waived them.</exception>
     public OrderFigures Finish(long sourceSymbols, bool heldOut)
     {
-        if (_predicted == 0) throw new InvalidOperationException($"Order {_order} predicted no symbol; it has no figures.");
+        if (Predicted == 0) throw new InvalidOperationException($"Order {_order} predicted no symbol; it has no figures.");
         if (heldOut && !_foldsWanted) throw new InvalidOperationException("The folds were waived; there is no held-out figure.");
         double information = _informationBits.Value;
-        double entropy = information / _predicted;
+        double entropy = information / Predicted;
+        // Contexts with one symbol join as one group of mean 0, by the rule of Spread.
+        double squares = _squaresBits + (_certain == 0 ? 0 : _meanBits * _meanBits * _predicted * ((double)_certain / Predicted));
         double? adaptive = null;
         int? exponent = null;
         if (_grid is not null)
@@ -99,18 +106,18 @@ public sealed class ContextMeasures
         bool hasHeldOut = heldOut && _grid is not null;
         return new OrderFigures(
             _order,
-            _predicted,
+            Predicted,
             entropy,
-            entropy + (_pairs - _contexts) / (2.0 * _predicted * Logarithm.Ln2),
-            Math.Sqrt(_squaresBits) / _predicted,
+            entropy + (_pairs - _contexts) / (2.0 * Predicted * Logarithm.Ln2),
+            Math.Sqrt(squares) / Predicted,
             adaptive,
             exponent,
-            hasHeldOut ? _heldOut.Bits / _predicted : null,
+            hasHeldOut ? _heldOut.Bits / Predicted : null,
             hasHeldOut ? _heldOut.Escapes : null,
             _contexts,
             _countsOfCounts.ContextsUnder8,
             _pairs,
-            (double)_countsOfCounts.PairsSeenOnce / _predicted);
+            (double)_countsOfCounts.PairsSeenOnce / Predicted);
     }
 
     /// <summary>Forgets everything added, ready for the next source.</summary>
@@ -120,41 +127,61 @@ public sealed class ContextMeasures
         _foldsWanted = foldsWanted;
         _informationBits = default;
         _meanBits = _squaresBits = 0;
-        _predicted = _contexts = _pairs = 0;
+        _predicted = _certain = _contexts = _pairs = 0;
         _countsOfCounts.Clear();
         _heldOut.Clear();
     }
 
-    /// <summary>Adds Σ n·log2(n(c)/n) and the spread of log2(n(c)/n) around the mean of all contexts.</summary>
+    /// <summary>A context with one symbol: most contexts of thin data. It holds no information.</summary>
+    private void AddOneSymbol(ReadOnlySpan<long> fold0, ReadOnlySpan<long> fold1)
+    {
+        long n0 = fold0[0], n1 = fold1[0], n = n0 + n1;
+        if (n == 0) return;
+        _certain += n;
+        _contexts++;
+        _pairs++;
+        _countsOfCounts.AddContext(n);
+        _countsOfCounts.AddPair(n);
+        if (!_foldsWanted || _grid is null) return;
+        _heldOut.Add(fold0, new FoldSummary(n0, n0 == 0 ? 0 : 1, n0), fold1, n1);
+        _heldOut.Add(fold1, new FoldSummary(n1, n1 == 0 ? 0 : 1, n1), fold0, n0);
+    }
+
+    /// <summary>Adds Σ n·log2(n(c)/n) and the spread of log2(n(c)/n) around it.</summary>
     private void AddInformation(ReadOnlySpan<long> counts, long total, long largest)
     {
-        double bits = 0, squares = 0;
         if (_order == 0)
         {
             // One context: the very bits of Entropy, so that one figure never has two values.
-            bits = Entropy.InformationBits(counts, total);
-            squares = Entropy.SquaresBits(counts, total, largest);
+            Spread(Entropy.InformationBits(counts, total), Entropy.SquaresBits(counts, total, largest), total);
+            return;
         }
-        else if (largest != total)
+        if (largest == total)
         {
-            // Measured from the context's commonest symbol: equal counts differ by exactly 0, and nothing cancels when one symbol rules.
-            double most = Log2Table.Of(largest), first = 0, second = 0;
-            foreach (long n in counts)
-            {
-                double above = most - Log2Table.Of(n), weighted = n * above;
-                first += weighted;
-                second += weighted * above;
-            }
-            double least = total < Log2Table.Limit ? Log2Table.Of(total) - most : Entropy.SelfInformation(largest, total);
-            bits = first + total * least;
-            squares = Math.Max(0, second - first * first / total);
+            _certain += total;
+            return;
         }
+        // Measured from the context's commonest symbol: equal counts differ by exactly 0, and nothing cancels when one symbol rules.
+        double most = Log2Table.Of(largest), first = 0, second = 0;
+        foreach (long n in counts)
+        {
+            double above = most - Log2Table.Of(n), weighted = n * above;
+            first += weighted;
+            second += weighted * above;
+        }
+        double least = total < Log2Table.Limit ? Log2Table.Of(total) - most : Entropy.SelfInformation(largest, total);
+        Spread(first + total * least, Math.Max(0, second - first * first / total), total);
+    }
+
+    /// <summary>Joins a context's information and its squares around its own mean to those of all before it.</summary>
+    /// <remarks>T. Chan, G. Golub and R. LeVeque, Updating formulae and a pairwise algorithm for computing sample variances (1979).</remarks>
+    private void Spread(double bits, double squares, long total)
+    {
         _informationBits.Add(bits);
-        // Pairwise update of mean and sum of squares: T. Chan, G. Golub and R. LeVeque, Updating formulae and a pairwise algorithm for computing sample variances (1979).
         long before = _predicted;
         _predicted += total;
-        double off = bits / total - _meanBits;
         _squaresBits += squares;
+        double off = bits / total - _meanBits;
         if (off == 0) return;
         double share = (double)total / _predicted;
         _meanBits += off * share;

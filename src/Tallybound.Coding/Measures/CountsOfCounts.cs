@@ -46,6 +46,19 @@ internal sealed class CountsOfCounts
         }
     }
 
+    public void AddPair(long n)
+    {
+        if (n < Tallied)
+        {
+            _pairs[n]++;
+            _pairsUsed = Math.Max(_pairsUsed, (int)n);
+        }
+        else
+        {
+            _grid?.AddPairs(n, -1, _nats);
+        }
+    }
+
     /// <summary>Adds the pairs of one context, none above <paramref name="largest"/>. Absent symbols land in entry 0, which is never read.</summary>
     public void AddPairs(ReadOnlySpan<long> counts, long largest)
     {

@@ -4,7 +4,7 @@ using Tallybound.Coding.Numerics;
 
 namespace Tallybound.Coding.Measures;
 
-/// <summary>A figure of summed counts, such as <see cref="Entropy.BitsPerSymbol"/>. It must not keep the span.</summary>
+/// <summary>A figure of summed counts, such as <see cref="Entropy.BitsPerSymbol"/>. Symbols that the whole source never used are left out of the span, which must not be kept.</summary>
 public delegate double CountStatistic(ReadOnlySpan<long> counts);
 
 /// <summary>95 % intervals of figures of a source that was tallied in segments, by drawing runs of neighbouring segments again and again.</summary>
@@ -49,17 +49,18 @@ public static class MovingBlockBootstrap
         int segments = counts.Length / alphabetSize;
         if (segments < FewestSegments) return null;
         var plan = new ResamplingPlan(segments, blockLength ?? BlockLength(segments), Replicates, seed);
-        int row = alphabetSize;
+        int[] used = PrefixSums.ColumnsInUse(counts, alphabetSize);
+        int row = used.Length;
         long[] sums = ArrayPool<long>.Shared.Rent((Replicates + 1) * row);
         long[] prefix = ArrayPool<long>.Shared.Rent((segments + 1) * PrefixSums.Columns);
         try
         {
             // Replicate 0 is the whole. A few columns at a time, so that their prefix sums stay in the cache however many segments there are.
-            for (int column = 0; column < row; column += PrefixSums.Columns)
+            for (int first = 0; first < row; first += PrefixSums.Columns)
             {
-                int width = Math.Min(PrefixSums.Columns, row - column);
-                PrefixSums.Build(counts, row, column, width, prefix);
-                PrefixSums.SumBlocks(prefix, plan, sums, row, column, width);
+                int width = Math.Min(PrefixSums.Columns, row - first);
+                PrefixSums.Build(counts, alphabetSize, used.AsSpan(first, width), prefix);
+                PrefixSums.SumBlocks(prefix, plan, sums, row, first, width);
             }
             var replicates = new double[Replicates];
             for (int r = 0; r < Replicates; r++) replicates[r] = statistic(sums.AsSpan((r + 1) * row, row));

@@ -6,7 +6,8 @@ public static class GammaFunction
     /// <summary>From here on the Stirling series is exact to double precision.</summary>
     private const double SeriesFrom = 10;
 
-    private const double HalfLnTwoPi = 0.918938533204672741780329736406;
+    /// <summary>½ ln 2π.</summary>
+    internal const double HalfLnTwoPi = 0.918938533204672741780329736406;
 
     /// <summary>ln Γ(x), natural logarithm.</summary>
     /// <param name="x">Above 0 and finite.</param>

@@ -131,6 +131,45 @@ public sealed class ContextMeasuresTests
             return dense.Finish(1000, true) == sparse.Finish(1000, true);
         });
 
+    /// <summary>Counts of every size in one order, below and above every table.</summary>
+    [Fact]
+    public void Counts_of_any_size_give_the_figures_of_the_formulas() =>
+        Gen.Select(Gen.Int[8, 36], Gen.Long[0, 1L << 36], Gen.Long[0, 1L << 36]).Select((shift, a, b) => (A: a >> shift, B: b >> shift)).Array[1, 17].List[1, 12]
+            .Where(rows => rows.Any(row => row.Any(n => n.A + n.B > 0))).Sample(rows =>
+        {
+            var measures = new ContextMeasures(17, 1);
+            long predicted = 0;
+            double information = 0, heldOut = 0;
+            var adaptive = new double[6];
+            foreach ((long A, long B)[] row in rows)
+            {
+                long[] fold0 = [.. row.Select(n => n.A)], fold1 = [.. row.Select(n => n.B)], both = [.. row.Select(n => n.A + n.B)];
+                measures.AddContext(fold0, fold1);
+                predicted += both.Sum();
+                information += Entropy.Bound(both).Bits;
+                heldOut += HeldOutBits(fold0, fold1, 17) + HeldOutBits(fold1, fold0, 17);
+                for (int j = 0; j < adaptive.Length; j++) adaptive[j] += AdaptiveCost.Bits(both, 17, Math.Pow(2, -j));
+            }
+            OrderFigures figures = measures.Finish(predicted + 1, heldOut: true);
+            return Close(figures.EntropyBitsPerSymbol * predicted, information)
+                && Close(figures.HeldOutBitsPerSymbol!.Value * predicted, heldOut)
+                && Close(figures.AdaptiveBitsPerSymbol!.Value * (predicted + 1), adaptive.Min() + Math.Log2(17) + 3);
+        });
+
+    private static double HeldOutBits(long[] training, long[] paying, int alphabetSize)
+    {
+        long total = training.Sum(), distinct = training.Count(n => n > 0), weight = distinct == alphabetSize ? total : total + distinct;
+        double bits = 0;
+        for (int i = 0; i < training.Length; i++)
+        {
+            if (paying[i] == 0) continue;
+            bits += paying[i] * (total == 0 ? Math.Log2(alphabetSize)
+                : training[i] > 0 ? Entropy.SelfInformation(training[i], weight)
+                : Entropy.SelfInformation(distinct, weight) + Math.Log2(alphabetSize - distinct));
+        }
+        return bits;
+    }
+
     /// <summary>Counts past every table, where lnΓ itself has too few digits: the excess over the information is that of a closed form.</summary>
     [Fact]
     public void Adaptive_cost_of_one_long_run_keeps_its_digits()

@@ -67,6 +67,16 @@ public sealed class NumericsTests
         Assert.Equal(0.5 * Math.Log(2 * Math.PI * 1e12) + 1 / 12e12, GammaFunction.RisingFactorialExcess(1_000_000_000_000, 1), 1e-13);
 
     [Fact]
+    public void The_series_for_large_counts_gives_the_same_excess() =>
+        Gen.Select(Gen.Int[0, 16], Gen.Int[0, 40], Gen.Long[0, 1L << 40]).Sample((exponent, shift, more) =>
+        {
+            double a = Math.ScaleB(1, -exponent);
+            long n = RisingFactorialSeries.From + (more >> shift);
+            double expected = GammaFunction.RisingFactorialExcess(n, a);
+            return Math.Abs(new RisingFactorialSeries(a).At(Math.Log(n), 1.0 / n) - expected) <= 1e-14 * Math.Max(1, Math.Abs(expected)) * 2;
+        });
+
+    [Fact]
     public void Log1p_keeps_the_digits_of_small_arguments() =>
         Gen.Double[-300, -0.1].Sample(exponent =>
         {

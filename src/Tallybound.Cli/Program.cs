@@ -1,1 +1,3 @@
-return 0;
+using Tallybound.Cli.Running;
+
+return CommandLine.Run(args);

@@ -1,0 +1,53 @@
+namespace Tallybound.Cli.Screen;
+
+/// <summary>The help pages. Each fits a screen of 24 lines and 80 columns.</summary>
+internal static class HelpText
+{
+    /// <summary>The page of <c>tallybound --help</c>.</summary>
+    public const string Program = """
+        tallybound counts the symbols of your data and says what entropy coding can make
+        of them: entropy bounds, and what real codes cost with tables and framing.
+
+        Usage: tallybound COMMAND [options]
+
+          profile INPUT...   profile files, folders and streams, and write a run folder
+
+          --help, -h         this page; tallybound COMMAND --help for a command's own
+          --version          the program's version
+
+        Examples:
+          tallybound profile /data/depot
+          tallybound profile sensor.bin --view words-le,bytes
+          zcat door.log.gz | tallybound profile - --out reports/door
+
+        Exit codes: 0 well, 1 some sources failed, 2 the command line is wrong,
+                    3 the run could not be kept, 130 stopped by you.
+
+        """;
+
+    /// <summary>The page of <c>tallybound profile --help</c>.</summary>
+    public const string Profile = """
+        Usage: tallybound profile INPUT... [options]
+        INPUT is a file, a folder (all below it), a named pipe, or - for standard input.
+          --out DIR               the run folder to make              [reports/NAME]
+          --view V[,V...]         bytes, nibbles, bits, words-le, words-be   [bytes]
+          --order K               highest context order                          [2]
+          --block-length N        longest symbol block; 1: none                  [3]
+          --length-limit L[,L...] code length limits in bits              [11,12,15]
+          --radix D[,D...]        Huffman codes of 3 to 16 digits beside the binary
+          --segment SIZE          segment along a source, a power of two   [by size]
+          --seed N                seed of every drawn sample                     [1]
+          --include, --exclude GLOB  files of a folder to take, to leave; repeatable
+          --inside                read gzip and Zstandard files as what they hold,
+          --inside-ratio N, --inside-size SIZE  and stop there        [1000] [64GiB]
+          --threads T, --memory SIZE  what the run may use    [all] [RAM/4, >=600MiB]
+          --no-digest, --keep-tallies  take no SHA-256; write counts: tallies.parquet
+          --quiet, --log-format text|json  no progress, no log; form of the log lines
+        SIZE is 64KiB, 600MiB, 2GiB (1 KiB is 1,024 bytes) or plain bytes.
+        Examples:
+          tallybound profile /data/depot --exclude '**/*.gz'
+          tallybound profile sensor.bin --view words-le,bytes --radix 3
+          zcat door.log.gz | tallybound profile - --out reports/door
+
+        """;
+}

@@ -1,0 +1,2 @@
+global using Tallybound.Tests;
+global using Xunit;

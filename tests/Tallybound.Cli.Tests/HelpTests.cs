@@ -1,0 +1,61 @@
+namespace Tallybound.Cli.Tests;
+
+public sealed class HelpTests
+{
+    private const int ScreenLines = 24;
+    private const int ScreenColumns = 80;
+
+    [Theory]
+    [InlineData("--help")]
+    [InlineData("-h")]
+    [InlineData("profile", "--help")]
+    [InlineData("profile", "-h")]
+    [InlineData("profile", "data", "--order", "1", "--help")]
+    public void Help_fits_a_screen_shows_examples_and_goes_to_standard_output(params string[] arguments)
+    {
+        using var folder = new FreshFolder();
+        Outcome outcome = BuiltProgram.Run(folder, arguments);
+        Assert.Equal(0, outcome.ExitCode);
+        Assert.Empty(outcome.Error);
+        Assert.InRange(outcome.OutputLines.Length, 10, ScreenLines);
+        Assert.All(outcome.OutputLines, line => Assert.InRange(line.Length, 0, ScreenColumns));
+        Assert.Contains("Examples:", outcome.Output, StringComparison.Ordinal);
+        Assert.Contains("tallybound profile ", outcome.Output, StringComparison.Ordinal);
+        Assert.Empty(folder.Everything());
+    }
+
+    [Fact]
+    public void Every_option_that_help_names_is_taken()
+    {
+        using var folder = new FreshFolder();
+        string help = BuiltProgram.Run(folder, "profile", "--help").Output;
+        string[] options = [.. help.Split([' ', ',', '\n', '[', ']'], StringSplitOptions.RemoveEmptyEntries)
+            .Where(word => word.StartsWith("--", StringComparison.Ordinal) && word.Length > 2).Distinct(StringComparer.Ordinal)];
+        foreach (string option in options)
+        {
+            // Without an input each ends as a usage error of another kind than "not an option".
+            Outcome outcome = BuiltProgram.Run(folder, "profile", option);
+            Assert.DoesNotContain("is not an option", outcome.Error, StringComparison.Ordinal);
+        }
+        Assert.Equal(19, options.Length);
+    }
+
+    [Fact]
+    public void Commands_and_options_of_other_days_are_not_offered()
+    {
+        using var folder = new FreshFolder();
+        string help = BuiltProgram.Run(folder, "--help").Output + BuiltProgram.Run(folder, "profile", "--help").Output;
+        string[] absent = ["columns", "codebook", "compare", "join", "--resume", "--dry-run", "--sample", "--time-budget", "--database", "--referee"];
+        foreach (string word in absent) Assert.DoesNotContain(word, help, StringComparison.Ordinal);
+        Assert.Equal(10, absent.Length);
+    }
+
+    [Fact]
+    public void The_version_is_one_line()
+    {
+        using var folder = new FreshFolder();
+        Outcome outcome = BuiltProgram.Run(folder, "--version");
+        Assert.Equal(0, outcome.ExitCode);
+        Assert.Matches(@"^tallybound \d+\.\d+\.\d+\n$", outcome.Output);
+    }
+}

@@ -14,12 +14,12 @@ internal static class CanonicalWords
         for (int symbol = 0; symbol < lengths.Length; symbol++) words[symbol] = lengths[symbol] == 0 ? (ushort)0 : next[lengths[symbol]]++;
     }
 
-    /// <summary>2^15 × the Kraft sum.</summary>
-    public static long KraftUnits(ReadOnlySpan<byte> lengths)
+    /// <summary>The word with its first bit least significant, as RFC 1951 §3.1.1 packs Huffman codes.</summary>
+    public static ulong Reverse(ushort word, int bits)
     {
-        long units = 0;
-        foreach (byte length in lengths) units += length == 0 ? 0 : 1L << (LongestWord - length);
-        return units;
+        uint reversed = 0;
+        for (int i = 0; i < bits; i++) reversed |= (uint)((word >> i) & 1) << (bits - 1 - i);
+        return reversed;
     }
 
     /// <summary>The symbol whose word is the <paramref name="bits"/> low bits of <paramref name="word"/>, or −1.</summary>

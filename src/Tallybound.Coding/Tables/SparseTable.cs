@@ -6,7 +6,7 @@ namespace Tallybound.Coding.Tables;
 
 /// <summary>A table for large alphabets of which little is in use: Elias δ of the number of symbols in use, δ(first symbol + 1), δ of every gap; 7 bits for the longest
 /// length; an inner Huffman code (at most 15 bits) over the lengths 1 to the longest, its lengths at 4 bits each; then one inner word a symbol, none where all lengths are equal.</summary>
-public static class SparseTable
+public static partial class SparseTable
 {
     private const int InnerLimit = CanonicalWords.LongestWord, InnerLengthBits = 4, LongestLength = 127;
 
@@ -121,8 +121,13 @@ public static class SparseTable
     {
         histogram.Clear();
         foreach (byte length in lengths) histogram[length]++;
+        CheckLengths(histogram);
+    }
+
+    private static void CheckLengths(ReadOnlySpan<long> histogram)
+    {
         int longest = Longest(histogram);
-        if (histogram[0] > 0 || longest > LongestLength) throw new ArgumentException($"Lengths reach from {(histogram[0] > 0 ? 0 : 1)} to {longest}; a sparse table allows 1 to {LongestLength}.", nameof(lengths));
+        if (histogram[0] > 0 || longest > LongestLength) throw new ArgumentException($"Lengths reach from {(histogram[0] > 0 ? 0 : 1)} to {longest}; a sparse table allows 1 to {LongestLength}.");
     }
 
     private static int Longest(ReadOnlySpan<long> histogram) => histogram.LastIndexOfAnyExcept(0L);

@@ -1,4 +1,5 @@
 using System.Buffers;
+using Tallybound.Coding.Bits;
 
 namespace Tallybound.Coding.Tables;
 
@@ -31,6 +32,12 @@ public static class TablePricing
         {
             case TableFormat.Flat:
                 bits = FlatTable.Bits(denseLengths.Length, longest);
+                return true;
+            case TableFormat.Rfc1951DynamicHeader:
+                if (!Rfc1951DynamicHeader.IsLegal(denseLengths)) return false;
+                var counter = default(BitCounter);
+                Rfc1951DynamicHeader.Encode(denseLengths, ref counter);
+                bits = counter.Bits;
                 return true;
             case TableFormat.Sparse:
                 bits = SparseBits(denseLengths);

@@ -1,0 +1,17 @@
+using System.Globalization;
+
+namespace Tallybound.Sources.Names;
+
+/// <summary>Keeps the names of a run apart.</summary>
+internal sealed class UniqueNames
+{
+    private readonly HashSet<string> taken = new(StringComparer.Ordinal);
+
+    /// <summary>The name, or the name with <c>~2</c>, <c>~3</c> … where it is taken.</summary>
+    public string Take(string name)
+    {
+        string candidate = name;
+        for (int number = 2; !taken.Add(candidate); number++) candidate = string.Create(CultureInfo.InvariantCulture, $"{name}~{number}");
+        return candidate;
+    }
+}

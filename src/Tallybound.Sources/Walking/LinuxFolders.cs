@@ -1,0 +1,70 @@
+using System.Runtime.InteropServices;
+using Tallybound.Sources.Native;
+
+namespace Tallybound.Sources.Walking;
+
+/// <summary>Folders of Linux, whose names are bytes.</summary>
+internal sealed unsafe class LinuxFolders : IFolderReader
+{
+    private const int NoSuchEntry = 2;
+    private const int NotAFolder = 20;
+    private const int RecordHead = 19;
+    private readonly byte[] buffer = GC.AllocateUninitializedArray<byte>(1 << 16, pinned: true);
+
+    public bool TryLook(ReadOnlySpan<byte> path, bool followLink, out FileFacts facts, out bool missing, out string? trouble)
+    {
+        bool found = LinuxPaths.TryLook(LibC.CurrentFolder, path, followLink, out facts, out int error);
+        missing = !found && error is NoSuchEntry or NotAFolder;
+        trouble = found ? null : ErrorWords.Of(error);
+        return found;
+    }
+
+    public List<FolderEntry>? List(ReadOnlySpan<byte> path, bool followLinks, out string? trouble)
+    {
+        int folder = LinuxPaths.Open(path, LibC.FolderOnly | LibC.NonBlocking, out int error);
+        if (folder < 0)
+        {
+            trouble = ErrorWords.Of(error);
+            return null;
+        }
+        try
+        {
+            var entries = new List<FolderEntry>();
+            fixed (byte* start = buffer)
+            {
+                while (true)
+                {
+                    nint filled = LibC.GetEntries(LibC.GetEntriesCall, folder, start, buffer.Length);
+                    if (filled == 0) break;
+                    if (filled < 0)
+                    {
+                        trouble = ErrorWords.Of(Marshal.GetLastPInvokeError());
+                        return null;
+                    }
+                    Take(folder, start, filled, followLinks, entries);
+                }
+            }
+            trouble = null;
+            return entries;
+        }
+        finally
+        {
+            _ = LibC.Close(folder);
+        }
+    }
+
+    private static void Take(int folder, byte* start, nint filled, bool followLinks, List<FolderEntry> entries)
+    {
+        for (nint at = 0; at < filled;)
+        {
+            byte* record = start + at;
+            at += *(ushort*)(record + 16);
+            ReadOnlySpan<byte> name = MemoryMarshal.CreateReadOnlySpanFromNullTerminated(record + RecordHead);
+            if (name.SequenceEqual("."u8) || name.SequenceEqual(".."u8)) continue;
+            bool looked = LinuxPaths.TryLook(folder, name, followLink: false, out FileFacts facts, out int error);
+            if (looked && facts.Type == FileType.Link && followLinks) looked = LinuxPaths.TryLook(folder, name, followLink: true, out facts, out error);
+            if (!looked && error == NoSuchEntry && !followLinks) continue;
+            entries.Add(new FolderEntry(name.ToArray(), looked ? facts : null, looked ? null : ErrorWords.Of(error)));
+        }
+    }
+}

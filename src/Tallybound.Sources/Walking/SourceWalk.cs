@@ -1,0 +1,17 @@
+using System.Text;
+using Tallybound.Sources.Members;
+using Tallybound.Sources.Names;
+using Tallybound.Sources.Native;
+
+namespace Tallybound.Sources;
+
+/// <summary>Finds the sources behind the inputs of a command line.</summary>
+public static class SourceWalk
+{
+    /// <summary>Lists every source in ordinal order of names. Reads folders, and the first bytes of files where members are asked for; opens no pipe.</summary>
+    /// <param name="request">What to look for.</param>
+    /// <param name="stop">Stops the walk.</param>
+    /// <exception cref="InputNotFoundException">An INPUT does not exist.</exception>
+    /// <exception cref="OperationCanceledException">The walk was stopped.</exception>
+    public static WalkResult Find(SourceRequest request, CancellationToken stop = default) => new Walking.Walk(request, stop).Run();
+}

@@ -53,7 +53,7 @@ public sealed class FailureTests
         using var folder = new FreshFolder();
         folder.Write("a.log", TestData.Log(3000, seed: 1));
         // No file may grow beyond 8 blocks of 1 KiB: the kernel refuses a write as it does on a full disk.
-        Outcome outcome = BuiltProgram.Shell(folder, "trap '' XFSZ; export DOTNET_EnableWriteXorExecute=0 COMPlus_EnableDiagnostics=0; ulimit -f 8; $TALLYBOUND profile a.log --quiet --out run");
+        Outcome outcome = BuiltProgram.Shell(folder, "trap '' XFSZ; export DOTNET_EnableWriteXorExecute=0 DOTNET_EnableDiagnostics=0; ulimit -f 8; $TALLYBOUND profile a.log --quiet --out run");
         Assert.Equal(3, outcome.ExitCode);
         Assert.StartsWith("tallybound: the run could not be kept", Assert.Single(outcome.ErrorLines), StringComparison.Ordinal);
         Assert.False(Directory.Exists(folder.At("run")));

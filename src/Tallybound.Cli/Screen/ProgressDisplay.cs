@@ -38,7 +38,6 @@ internal sealed class ProgressDisplay : IDisposable
     /// <summary>Gives the terminal its cursor back when the process is about to end without <see cref="Dispose"/>.</summary>
     public void GiveCursorBack()
     {
-        // No lock: the thread that holds it may be the one that hangs.
         if (console is not null) StandardStreams.WriteErrorLine("\u001b[?25h");
     }
 

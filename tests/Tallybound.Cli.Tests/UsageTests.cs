@@ -43,10 +43,10 @@ public sealed class UsageTests
         { ["profile", "x", "--referee", "deflate"], "--referee none" },
         { ["profile", "x", "--include"], "--include is given without a value" },
         { ["profile", "x", "--out", ""], "for example --out reports/review" },
-        { ["profile", "not-there"], "INPUT not-there does not exist" },
-        { ["profile", "x", "not-there/deeper"], "INPUT not-there/deeper does not exist" },
+        { ["profile", "not-there"], "INPUT not-there: there is no such file or folder" },
+        { ["profile", "x", "not-there/deeper"], "INPUT not-there/deeper: there is no such file or folder" },
         { ["profile", "x", "--view", "two\nlines"], "there is no view" },
-        { ["profile", "no\nsuch\u001b[31mfile"], "does not exist" },
+        { ["profile", "no\nsuch\u001b[31mfile"], "there is no such file or folder" },
     };
 
     [Theory]

@@ -1,8 +1,8 @@
 using System.Globalization;
 using System.Text;
 using System.Text.Json;
-using Tallybound.Cli.Screen;
 using Tallybound.Profiling.Run;
+using Tallybound.Sources;
 
 namespace Tallybound.Cli.Logging;
 
@@ -15,7 +15,7 @@ internal static class LogLine
     public static string Text(RunEvent runEvent, DateTime utc)
     {
         string about = runEvent.Source is null ? "" : runEvent.Source + ": ";
-        return TerminalText.Escape($"{Time(utc)} {Level(runEvent.Level)} {runEvent.Name} {about}{runEvent.Text}");
+        return DisplayText.Escape($"{Time(utc)} {Level(runEvent.Level)} {runEvent.Name} {about}{runEvent.Text}");
     }
 
     /// <summary>The object <c>{"time","level","event","source","text"}</c>; <c>source</c> is absent when the event is about the run.</summary>

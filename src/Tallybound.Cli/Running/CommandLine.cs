@@ -1,6 +1,7 @@
 using System.Reflection;
 using Tallybound.Cli.Options;
 using Tallybound.Cli.Screen;
+using Tallybound.Sources;
 
 namespace Tallybound.Cli.Running;
 
@@ -36,7 +37,7 @@ internal static class CommandLine
     }
 
     /// <summary>Says what is wrong in exactly one line.</summary>
-    public static void Complain(string what) => StandardStreams.WriteErrorLine(TerminalText.Escape($"tallybound: {what}"));
+    public static void Complain(string what) => StandardStreams.WriteErrorLine(DisplayText.Escape($"tallybound: {what}"));
 
     private static string Version => typeof(CommandLine).Assembly.GetCustomAttribute<AssemblyInformationalVersionAttribute>()!.InformationalVersion;
 }

@@ -7,6 +7,7 @@ using Tallybound.Profiling.Plan;
 using Tallybound.Profiling.Run;
 using Tallybound.Profiling.Wording;
 using Tallybound.Reports.Run;
+using Tallybound.Sources;
 
 namespace Tallybound.Cli.Running;
 
@@ -66,9 +67,9 @@ internal sealed class ProfileSession : IDisposable
         {
             return RunPlan.Freeze(request.Parameters, signals.Token);
         }
-        catch (FileNotFoundException e)
+        catch (InputNotFoundException e)
         {
-            throw new UsageException($"INPUT {e.FileName ?? e.Message} does not exist; name a file, a folder or - for standard input");
+            throw new UsageException($"INPUT {e.Message.TrimEnd('.')}");
         }
     }
 

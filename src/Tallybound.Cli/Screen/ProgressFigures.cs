@@ -2,6 +2,7 @@ using System.Diagnostics;
 using System.Globalization;
 using Tallybound.Profiling.Run;
 using Tallybound.Profiling.Wording;
+using Tallybound.Sources;
 
 namespace Tallybound.Cli.Screen;
 
@@ -37,7 +38,7 @@ internal sealed class ProgressFigures(RunProgress progress)
             ? SizeText.Bytes(progress.BytesRead)
             : $"{SizeText.Bytes(progress.BytesRead)} of {SizeText.Bytes(progress.BytesPlanned)}";
         string left = !progress.HasStream && bytesPerSecond > 0 ? $"  {Duration((progress.BytesPlanned - progress.BytesRead) / bytesPerSecond)} left" : "";
-        return $"{read}  {SizeText.Count(progress.SourcesDone)}/{SizeText.Count(progress.SourcesPlanned)} files  {SizeText.Bytes((long)bytesPerSecond)}/s{left}  {TerminalText.Escape(progress.CurrentSource)}";
+        return $"{read}  {SizeText.Count(progress.SourcesDone)}/{SizeText.Count(progress.SourcesPlanned)} files  {SizeText.Bytes((long)bytesPerSecond)}/s{left}  {DisplayText.Escape(progress.CurrentSource)}";
     }
 
     private static string Duration(double seconds)

@@ -2,6 +2,7 @@ using System.Globalization;
 using Tallybound.Profiling.Records;
 using Tallybound.Profiling.Run;
 using Tallybound.Profiling.Wording;
+using Tallybound.Sources;
 
 namespace Tallybound.Cli.Screen;
 
@@ -27,7 +28,7 @@ internal static class RunSummary
         var below = new List<string>();
         if (corpus.Profiled + corpus.Partial > 1) below.AddRange(Heaviest(result.Ledger.Heaviest(HeaviestShown)));
         if (corpus.Failed + corpus.Partial > 0) below.AddRange(Failures(result.Ledger.Failures(FailuresShown), corpus.Failed, corpus.Partial));
-        below.AddRange(["", TerminalText.Escape($"Report: {Path.Combine(folder, "index.html")}")]);
+        below.AddRange(["", DisplayText.Escape($"Report: {Path.Combine(folder, "index.html")}")]);
         if (corpus.Bytes > 0) above.AddRange(Rates(corpus, ScreenLines - above.Count - below.Count));
         return string.Join('\n', above.Concat(below)) + "\n";
     }
@@ -74,7 +75,7 @@ internal static class RunSummary
         {
             long bytes = source.Bytes ?? 0;
             string ratio = source.BestBytes is { } best ? SizeText.Ratio(bytes, best) : "";
-            yield return Cut($"{CutStart(TerminalText.Escape(source.Name), 35),-36}{SizeText.Count(bytes),20}{ratio,9}  {source.BestCode}".TrimEnd());
+            yield return Cut($"{CutStart(DisplayText.Escape(source.Name), 35),-36}{SizeText.Count(bytes),20}{ratio,9}  {source.BestCode}".TrimEnd());
         }
     }
 
@@ -83,7 +84,7 @@ internal static class RunSummary
         yield return "";
         yield return $"{SizeText.Count(failed)} failed, {SizeText.Count(partial)} read in part{(failures.Count < failed + partial ? "; the first of them (all are in sources.csv)" : "")}:";
         foreach (SourceSummary failure in failures)
-            yield return Cut($"  {CutStart(TerminalText.Escape(failure.Name), 36)}: {TerminalText.Escape(failure.Reason ?? "")}");
+            yield return Cut($"  {CutStart(DisplayText.Escape(failure.Name), 36)}: {DisplayText.Escape(failure.Reason ?? "")}");
     }
 
     private static string Cut(string text)

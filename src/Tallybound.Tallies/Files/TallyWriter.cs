@@ -81,6 +81,9 @@ internal enum TallyKind
     /// <summary>Sampled contexts.</summary>
     SampledContexts = 4,
 
+    /// <summary>Bytes of a small source.</summary>
+    SparseBytes = 6,
+
     /// <summary>Counts of segments.</summary>
     Segments = 5,
 }

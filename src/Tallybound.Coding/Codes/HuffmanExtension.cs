@@ -1,0 +1,93 @@
+using System.Numerics;
+
+namespace Tallybound.Coding.Codes;
+
+/// <summary>The Huffman code of the n-th extension of a memoryless source: what coding n symbols as one wins back of the loss by whole lengths.</summary>
+/// <param name="ExpectedBitsPerSymbol">Expected length ÷ n.</param>
+/// <param name="LengthHistogram">How many of the m^n blocks get each length, 256 entries.</param>
+public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] LengthHistogram)
+{
+    /// <summary>The code of the extension.</summary>
+    /// <param name="counts">n(s) of each symbol, at least one above 0.</param>
+    /// <param name="blockLength">n, at least 1.</param>
+    /// <remarks>Blocks whose symbols have the same counts weigh the same, so only combinations of different counts are listed, each with its number of blocks.
+    /// Weights are exact products where N^n fits 128 bits, else floating point.</remarks>
+    public static HuffmanExtension Of(ReadOnlySpan<long> counts, int blockLength)
+    {
+        ArgumentOutOfRangeException.ThrowIfLessThan(blockLength, 1);
+        CountGroups groups = CountGroups.Of(counts);
+        long total = 0;
+        foreach (long count in counts) total += count;
+        if (total == 0) throw new ArgumentException("No symbol is in use; an extension needs one.", nameof(counts));
+        var histogram = new long[256];
+        double cost = BitOperations.Log2((ulong)total) * (double)blockLength + blockLength < 128
+            ? Cost(groups, blockLength, count => (UInt128)count, histogram)
+            : Cost(groups, blockLength, count => (double)count, histogram);
+        return new HuffmanExtension(cost / Math.Pow(total, blockLength) / blockLength, histogram);
+    }
+
+    private static double Cost<TWeight>(CountGroups groups, int blockLength, Func<long, TWeight> weightOf, long[] histogram)
+        where TWeight : struct, INumber<TWeight>
+    {
+        TWeight[] bases = Array.ConvertAll(groups.Counts, count => weightOf(count));
+        var weights = new List<TWeight>();
+        var times = new List<long>();
+        List(bases, groups.Times, blockLength, 0, TWeight.One, 1, weights, times);
+        TWeight[] sorted = [.. weights];
+        long[] many = [.. times];
+        Array.Sort(sorted, many);
+        int used = Unite(sorted, many);
+        ApproximateCost<TWeight> cost = default;
+        WeightRuns.Build<TWeight, ApproximateCost<TWeight>>(sorted.AsSpan(0, used), many.AsSpan(0, used), histogram, ref cost);
+        return cost.Total;
+    }
+
+    /// <summary>Lists each multiset of n count groups once, with the number of blocks that have it.</summary>
+    private static void List<TWeight>(TWeight[] bases, long[] sizes, int left, int from, TWeight weight, long blocks, List<TWeight> weights, List<long> times)
+        where TWeight : struct, INumber<TWeight>
+    {
+        if (left == 0)
+        {
+            weights.Add(weight);
+            times.Add(blocks);
+            return;
+        }
+        if (from == bases.Length - 1)
+        {
+            for (int i = 0; i < left; i++) (weight, blocks) = (weight * bases[from], blocks * sizes[from]);
+            weights.Add(weight);
+            times.Add(blocks);
+            return;
+        }
+        for (int take = 0; take <= left; take++)
+        {
+            // The places of the symbols taken: a binomial of what is left; the size of the group for each.
+            List(bases, sizes, left - take, from + 1, weight, blocks * Binomial(left, take), weights, times);
+            (weight, blocks) = (weight * bases[from], blocks * sizes[from]);
+        }
+    }
+
+    private static int Unite<TWeight>(TWeight[] weights, long[] times)
+        where TWeight : struct, INumber<TWeight>
+    {
+        int used = 0;
+        for (int i = 0; i < weights.Length; i++)
+        {
+            if (used > 0 && weights[used - 1] == weights[i])
+            {
+                times[used - 1] += times[i];
+                continue;
+            }
+            (weights[used], times[used]) = (weights[i], times[i]);
+            used++;
+        }
+        return used;
+    }
+
+    private static long Binomial(int n, int k)
+    {
+        long value = 1;
+        for (int i = 1; i <= k; i++) value = value * (n - k + i) / i;
+        return value;
+    }
+}

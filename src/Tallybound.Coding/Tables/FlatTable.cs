@@ -29,7 +29,7 @@ public static class FlatTable
 
     /// <summary>Reads the table of an alphabet of <c>lengths.Length</c> symbols.</summary>
     /// <exception cref="InvalidDataException">The bits end early, or a length is above the longest.</exception>
-    public static void Decode(ref BitReader reader, Span<byte> lengths)
+    public static void Decode(ref BitReader reader, scoped Span<byte> lengths)
     {
         int longest = (int)reader.Read(LongestBits), bits = LengthBits(longest);
         for (int symbol = 0; symbol < lengths.Length; symbol++)

@@ -72,7 +72,7 @@ public static class Rfc1951DynamicHeader
 
     /// <summary>Reads the table of a byte alphabet of <c>lengths.Length</c> symbols, as <see cref="Encode"/> writes it.</summary>
     /// <exception cref="InvalidDataException">The bits end early or make no table of this alphabet.</exception>
-    public static void Decode(ref LowBitReader reader, Span<byte> lengths)
+    public static void Decode(ref LowBitReader reader, scoped Span<byte> lengths)
     {
         (byte[] literals, byte[] distances) = DecodeBlock(ref reader);
         if (distances.AsSpan().ContainsAnyExcept((byte)0) || literals.AsSpan(lengths.Length).ContainsAnyExcept((byte)0)) throw new InvalidDataException($"The header has lengths outside an alphabet of {lengths.Length}.");

@@ -54,7 +54,7 @@ public static class Rfc8878FseDistribution
     /// <param name="frequencies">Takes one frequency a symbol; what is behind the last one sent becomes 0.</param>
     /// <returns>R.</returns>
     /// <exception cref="InvalidDataException">The bits end early, or the table names a symbol beyond the span or gives out more than 2^R.</exception>
-    public static int Decode(ref LowBitReader reader, Span<int> frequencies)
+    public static int Decode(ref LowBitReader reader, scoped Span<int> frequencies)
     {
         frequencies.Clear();
         int accuracyLog = (int)reader.Read(LogBits) + SmallestLog, left = 1 << accuracyLog;

@@ -39,6 +39,8 @@ public static class TablePricing
                 Rfc1951DynamicHeader.Encode(denseLengths, ref counter);
                 bits = counter.Bits;
                 return true;
+            case TableFormat.Rfc8878HuffmanWeights:
+                return Rfc8878HuffmanWeights.TryPrice(denseLengths, out bits);
             case TableFormat.Sparse:
                 bits = SparseBits(denseLengths);
                 return true;

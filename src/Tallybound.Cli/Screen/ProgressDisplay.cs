@@ -1,4 +1,5 @@
 using Spectre.Console;
+using Spectre.Console.Rendering;
 using Tallybound.Profiling.Run;
 
 namespace Tallybound.Cli.Screen;
@@ -10,6 +11,11 @@ internal sealed class ProgressDisplay : IDisposable
     private static readonly TimeSpan Patience = TimeSpan.FromMilliseconds(400);
 
     private static readonly TimeSpan Redraw = TimeSpan.FromMilliseconds(200);
+
+    private const int BarColumns = 16;
+
+    /// <summary>Columns that bar or spinner, the gaps and the terminal's last column take from the figures.</summary>
+    private const int TakenColumns = BarColumns + 4;
 
     private readonly Lock gate = new();
     private readonly ManualResetEventSlim ended = new();
@@ -58,7 +64,7 @@ internal sealed class ProgressDisplay : IDisposable
         lock (gate) console = terminal;
         var figures = new ProgressFigures(progress);
         terminal.Progress().AutoClear(enabled: true).AutoRefresh(enabled: true).HideCompleted(enabled: false)
-            .Columns(progress.HasStream ? [new SpinnerColumn(), new FiguresColumn(figures)] : [new ProgressBarColumn { Width = 16 }, new FiguresColumn(figures)])
+            .Columns(progress.HasStream ? [new SpinnerColumn(), new FiguresColumn(figures)] : [new ProgressBarColumn { Width = BarColumns }, new FiguresColumn(figures)])
             .Start(context =>
             {
                 ProgressTask task = context.AddTask("profile", maxValue: 1);
@@ -76,7 +82,7 @@ internal sealed class ProgressDisplay : IDisposable
     {
         protected override bool NoWrap => true;
 
-        public override Spectre.Console.Rendering.IRenderable Render(Spectre.Console.Rendering.RenderOptions options, ProgressTask task, TimeSpan deltaTime) =>
-            new Text(figures.Line()).Overflow(Overflow.Ellipsis);
+        public override IRenderable Render(RenderOptions options, ProgressTask task, TimeSpan deltaTime) =>
+            new Text(figures.Line(Math.Max(1, options.ConsoleSize.Width - TakenColumns)));
     }
 }

@@ -12,7 +12,7 @@ internal sealed class ProgressFigures(RunProgress progress)
     /// <summary>Share of the old rate that a new sample keeps, so that the figure can be read.</summary>
     private const double Inertia = 0.8;
 
-    private long lastBytes;
+    private long lastBytes = progress.BytesRead;
     private long lastTime = Stopwatch.GetTimestamp();
     private double bytesPerSecond;
 
@@ -32,13 +32,15 @@ internal sealed class ProgressFigures(RunProgress progress)
     }
 
     /// <summary>The line: bytes, files, rate, time left where it can be told, and the source at hand with its name made harmless.</summary>
-    public string Line()
+    /// <param name="columns">Columns there are; what does not fit is left out at the end.</param>
+    public string Line(int columns)
     {
         string read = progress.HasStream || progress.BytesPlanned == 0
             ? SizeText.Bytes(progress.BytesRead)
             : $"{SizeText.Bytes(progress.BytesRead)} of {SizeText.Bytes(progress.BytesPlanned)}";
         string left = !progress.HasStream && bytesPerSecond > 0 ? $"  {Duration((progress.BytesPlanned - progress.BytesRead) / bytesPerSecond)} left" : "";
-        return $"{read}  {SizeText.Count(progress.SourcesDone)}/{SizeText.Count(progress.SourcesPlanned)} files  {SizeText.Bytes((long)bytesPerSecond)}/s{left}  {DisplayText.Escape(progress.CurrentSource)}";
+        string line = $"{read}  {SizeText.Count(progress.SourcesDone)}/{SizeText.Count(progress.SourcesPlanned)} files  {SizeText.Bytes((long)bytesPerSecond)}/s{left}  {DisplayText.Escape(progress.CurrentSource)}";
+        return line.Length <= columns ? line : line[..(columns - 1)] + "…";
     }
 
     private static string Duration(double seconds)

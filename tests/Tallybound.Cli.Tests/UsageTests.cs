@@ -22,6 +22,10 @@ public sealed class UsageTests
         { ["profile", "x", "--order"], "--order is given without a value" },
         { ["profile", "x", "--order", "1", "--order", "2"], "given 2 times" },
         { ["profile", "x", "--block-length", "0"], "from 1 to 24" },
+        { ["profile", "x", "--order", "3"], "bytes reach 2" },
+        { ["profile", "x", "--order", "6", "--view", "bytes,nibbles"], "bytes reach 2, nibbles reach 5" },
+        { ["profile", "x", "--block-length", "4"], "bytes reach 3" },
+        { ["profile", "x", "--block-length", "2", "--view", "words-le"], "words-le reach 1" },
         { ["profile", "x", "--length-limit", "11,,12"], "for example --length-limit 11,12,15" },
         { ["profile", "x", "--length-limit", "64"], "from 1 to 63" },
         { ["profile", "x", "--radix", "17"], "from 2 to 16" },
@@ -73,5 +77,23 @@ public sealed class UsageTests
         folder.Write("@x", "door"u8.ToArray());
         Assert.Equal(0, BuiltProgram.Run(folder, "profile", "--out", "run", "@x", "--", "-x").ExitCode);
         Assert.Equal(["-x", "@x"], RunRecordFile.In(folder.At("run")).Names);
+    }
+
+    [Fact]
+    public void Every_view_is_counted_as_far_as_the_command_line_allows()
+    {
+        using var folder = new FreshFolder();
+        folder.Write("x", TestData.Skewed(5000, seed: 1));
+        (string View, int Order, int Block)[] reaches = [("bytes", 2, 3), ("nibbles", 5, 6), ("bits", 23, 24), ("words-le", 0, 1), ("words-be", 0, 1)];
+        foreach ((string view, int order, int block) in reaches)
+        {
+            Assert.Equal(0, BuiltProgram.Run(folder, "profile", "x", "--out", view, "--view", view, "--order", $"{order}", "--block-length", $"{block}").ExitCode);
+            var figures = RunRecordFile.In(folder.At(view)).Source("x")["views"]![0]!;
+            Assert.Equal(order + 1, figures["orders"]!.AsArray().Count);
+            Assert.Equal(block - 1, figures["symbolBlocks"]!.AsArray().Count);
+            Assert.Equal(2, BuiltProgram.Run(folder, "profile", "x", "--view", view, "--order", $"{order + 1}").ExitCode);
+            Assert.Equal(2, BuiltProgram.Run(folder, "profile", "x", "--view", view, "--block-length", $"{block + 1}").ExitCode);
+        }
+        Assert.Equal(5, reaches.Length);
     }
 }

@@ -11,10 +11,6 @@ internal sealed class ProfileCommand
     /// <summary>The command's name.</summary>
     public const string Name = "profile";
 
-    /// <summary>The longest alphabet of symbol blocks is 2^24, which bits reach with blocks of 24.</summary>
-    private const int LongestBlock = 24;
-
-    private const int HighestOrder = 24;
     private const int LongestCode = 63;
     private const int LargestRadix = 16;
     private const int MostThreads = 1024;
@@ -66,13 +62,15 @@ internal sealed class ProfileCommand
     {
         List<string> sources = Inputs(result, afterTerminator);
         var parameters = new RunParameters { Inputs = sources, Include = Globs(result, include), Exclude = Globs(result, exclude) };
-        if (Value(result, order) is { } k) parameters = parameters with { HighestOrder = (int)OptionValue.Whole("--order", k, 0, HighestOrder, "2") };
-        if (Value(result, blockLength) is { } n) parameters = parameters with { LongestBlock = (int)OptionValue.Whole("--block-length", n, 1, LongestBlock, "3") };
+        if (Value(result, order) is { } k) parameters = parameters with { HighestOrder = (int)OptionValue.Whole("--order", k, 0, ViewReach.HighestOrder, "2") };
+        if (Value(result, blockLength) is { } n) parameters = parameters with { LongestBlock = (int)OptionValue.Whole("--block-length", n, 1, ViewReach.LongestBlock, "3") };
         if (Value(result, lengthLimit) is { } limits)
             parameters = parameters with { LengthLimits = OptionValue.Wholes("--length-limit", limits, 1, LongestCode, "11,12,15"), LengthLimitsAsked = true };
         if (Value(result, radix) is { } radices)
             parameters = parameters with { Radices = OptionValue.Wholes("--radix", radices, 2, LargestRadix, "3,4").FindAll(digits => digits != 2) };
         if (Value(result, view) is { } views) parameters = parameters with { Views = OptionValue.Names("--view", views, "view", ViewNames.All) };
+        if (Value(result, order) is not null) ViewReach.CheckOrder(parameters.HighestOrder, parameters.Views);
+        if (Value(result, blockLength) is not null) ViewReach.CheckBlockLength(parameters.LongestBlock, parameters.Views);
         if (Value(result, threads) is { } t) parameters = parameters with { Threads = (int)OptionValue.Whole("--threads", t, 1, MostThreads, "2") };
         if (Value(result, memory) is { } m) parameters = parameters with { MemoryBytes = OptionValue.Size("--memory", m, MemoryPlan.LeastBytes, "600MiB") };
         if (Value(result, segment) is { } s) parameters = parameters with { SegmentBytes = OptionValue.PowerOfTwoSize("--segment", s, LeastSegmentBytes, "64KiB") };

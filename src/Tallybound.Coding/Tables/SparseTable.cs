@@ -22,6 +22,17 @@ public static partial class SparseTable
         return EliasDelta.Length(symbols.Length) + EliasDelta.Length(symbols[0] + 1L) + GapBits(symbols) + LengthsBits(histogram);
     }
 
+    /// <summary>Bits of the table when only the number of symbols of each length is known: which symbol has which makes no difference to the price.</summary>
+    /// <param name="symbols">Symbols in use, ascending, at least one.</param>
+    /// <param name="lengthHistogram">How many symbols have each length, indexed by length, none at 0 or above 127.</param>
+    /// <exception cref="ArgumentException">No symbol is in use, or a length is outside 1…127.</exception>
+    public static long BitsByHistogram(ReadOnlySpan<int> symbols, ReadOnlySpan<long> lengthHistogram)
+    {
+        if (symbols.IsEmpty) throw new ArgumentException("No symbol is in use; a sparse table needs one.", nameof(symbols));
+        CheckLengths(lengthHistogram);
+        return EliasDelta.Length(symbols.Length) + EliasDelta.Length(symbols[0] + 1L) + GapBits(symbols) + LengthsBits(lengthHistogram);
+    }
+
     /// <summary>Writes the table; parameters as for <see cref="Bits"/>.</summary>
     public static void Encode<TSink>(ReadOnlySpan<int> symbols, ReadOnlySpan<byte> lengths, ref TSink sink)
         where TSink : IBitSink

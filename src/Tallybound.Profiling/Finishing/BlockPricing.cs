@@ -1,0 +1,71 @@
+using System.Numerics;
+using Tallybound.Coding.Codes;
+using Tallybound.Coding.Measures;
+using Tallybound.Coding.Tables;
+using Tallybound.Profiling.Records;
+using Tallybound.Tallies;
+
+namespace Tallybound.Profiling.Finishing;
+
+/// <summary>Prices symbols coded n at a time: the blocks that stand in the source, and the independent extension.</summary>
+internal sealed class BlockPricing
+{
+    /// <summary>An extension of at most this many blocks is always priced; a larger one where the source has at least an eighth as many blocks.</summary>
+    private const long ExtensionAlwaysAtMost = 1 << 15;
+
+    private readonly long[] histogram = new long[256];
+
+    /// <summary>Prices one block length; null where the source has no whole block.</summary>
+    /// <param name="facts">The view.</param>
+    /// <param name="blocks">Its blocks in use.</param>
+    public (SymbolBlockProfile Profile, CodePrice Price)? Price(ViewFacts facts, BlockCounts blocks)
+    {
+        int n = blocks.Length;
+        long whole = facts.Symbols / n;
+        if (whole == 0) return null;
+        long leftOverBits = facts.Symbols % n * facts.PlainBits;
+        long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;
+        double entropyBits = Entropy.BitsPerSymbol(blocks.Counts);
+        (long tableBits, TableFormat format) = Table(facts.AlphabetSize, n, blocks.Symbols, histogram);
+        double bound = ((whole * entropyBits) + leftOverBits) / facts.Symbols;
+        CodePrice price = new PriceMaker(facts, bound, "block").Make("block-huffman", payload, tableBits, format.Name()) with
+        {
+            BlockLength = n,
+            LongestCode = histogram.AsSpan().LastIndexOfAnyExcept(0L),
+        };
+        var profile = new SymbolBlockProfile
+        {
+            BlockLength = n,
+            Blocks = whole,
+            BlocksInUse = blocks.Symbols.Length,
+            BlockEntropyBitsPerSymbol = entropyBits / n,
+            Independent = Extension(facts, n, whole, leftOverBits),
+            Observed = new ObservedBlocks(payload, tableBits, price.FramingBits!.Value, price.TotalBits!.Value),
+        };
+        return (profile, price);
+    }
+
+    private static IndependentExtension? Extension(ViewFacts facts, int n, long whole, long leftOverBits)
+    {
+        double blocksOfExtension = Math.Pow(facts.SymbolsInUse, n);
+        if (blocksOfExtension > ExtensionAlwaysAtMost && blocksOfExtension > 8.0 * whole) return null;
+        HuffmanExtension extension = HuffmanExtension.Of(facts.Counts, n);
+        var inUse = new int[facts.SymbolsInUse];
+        for (int symbol = 0, at = 0; symbol < facts.Counts.Length; symbol++)
+            if (facts.Counts[symbol] > 0) inUse[at++] = symbol;
+        long sparse = SparseTable.BitsOfExtension(inUse, facts.AlphabetSize, n, extension.LengthHistogram);
+        long flat = FlatTable.Bits((long)BigInteger.Pow(facts.AlphabetSize, n), extension.LengthHistogram.AsSpan().LastIndexOfAnyExcept(0L));
+        long table = Math.Min(sparse, flat);
+        long payload = (long)Math.Round(extension.ExpectedBitsPerSymbol * n * whole) + leftOverBits;
+        long framing = Framing.Bits(facts.Symbols, table, payload) + facts.OutsideBits;
+        return new IndependentExtension { ExpectedBitsPerSymbol = extension.ExpectedBitsPerSymbol, TableBits = table, ExpectedTotalBits = payload + table + framing };
+    }
+
+    private static (long Bits, TableFormat Format) Table(int alphabetSize, int n, ReadOnlySpan<int> symbols, ReadOnlySpan<long> histogram)
+    {
+        long alphabet = (long)BigInteger.Pow(alphabetSize, n);
+        long sparse = SparseTable.BitsByHistogram(symbols, histogram);
+        long flat = FlatTable.Bits(alphabet, histogram.LastIndexOfAnyExcept(0L));
+        return flat <= sparse ? (flat, TableFormat.Flat) : (sparse, TableFormat.Sparse);
+    }
+}

@@ -50,6 +50,9 @@ public sealed unsafe partial class ByteTally : ISymbolTally, IDisposable
         MakeTables();
     }
 
+    /// <summary>True where the tally holds the tables of 2^24 counters.</summary>
+    public bool IsLarge => triplesWanted;
+
     /// <inheritdoc/>
     public int AlphabetSize => 256;
 

@@ -1,3 +1,5 @@
+using Tallybound.Tallies.Files;
+
 namespace Tallybound.Tallies;
 
 /// <summary>The one place that says which tally counts a view.</summary>
@@ -36,6 +38,24 @@ public static class TallyChoice
             "words-le" => new WordTally(highByteFirst: false),
             "words-be" => new WordTally(highByteFirst: true),
             _ => throw new ArgumentException($"There is no view called {view}.", nameof(view)),
+        };
+    }
+
+    /// <summary>Reads a tally that any <see cref="ISymbolTally.WriteTo"/> wrote.</summary>
+    /// <param name="stream">A stream that can go back to its start.</param>
+    /// <exception cref="InvalidDataException">It is damaged, ends early, or holds no symbol tally.</exception>
+    public static ISymbolTally ReadFrom(Stream stream)
+    {
+        long start = stream.Position;
+        TallyKind kind = TallyReader.KindOf(stream);
+        stream.Position = start;
+        return kind switch
+        {
+            TallyKind.Bytes => ByteTally.ReadFrom(stream),
+            TallyKind.SparseBytes => SparseByteTally.ReadFrom(stream),
+            TallyKind.SmallAlphabet => SmallAlphabetTally.ReadFrom(stream),
+            TallyKind.Words => WordTally.ReadFrom(stream),
+            _ => throw new InvalidDataException($"The tally is of kind {(long)kind}; that is no tally of symbols."),
         };
     }
 }

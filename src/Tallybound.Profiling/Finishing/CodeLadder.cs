@@ -1,4 +1,5 @@
 using Tallybound.Coding.Codes;
+using Tallybound.Coding.Codes.Range;
 using Tallybound.Coding.Codes.Tans;
 using Tallybound.Coding.Measures;
 using Tallybound.Coding.Tables;
@@ -29,9 +30,9 @@ internal sealed class CodeLadder(RunParameters parameters)
     {
         if (free.Length != facts.AlphabetSize) (free, other) = (new byte[facts.AlphabetSize], new byte[facts.AlphabetSize]);
         var price = new PriceMaker(facts, entropyBitsPerSymbol, "memoryless");
-        prices.Add(price.Make("fixed", FixedCode.PayloadBits(facts.Symbols, facts.SymbolsInUse), FixedCode.TableBits(facts.AlphabetSize), "map of symbols in use") with
+        prices.Add(price.Make("fixed", FixedCode.PayloadBits(facts.Counts), FixedCode.TableBits(facts.AlphabetSize), "map of symbols in use") with
         {
-            LongestCode = FixedCode.BitsPerSymbol(facts.SymbolsInUse),
+            LongestCode = FixedCode.Width(facts.SymbolsInUse),
         });
         Huffman.Lengths(facts.Counts, free);
         CodePrice huffman = PriceHuffman(facts, price);
@@ -58,7 +59,7 @@ internal sealed class CodeLadder(RunParameters parameters)
         bool same = huffman.LongestCode <= limit;
         if (!same && !LengthLimited.TryLengths(facts.Counts, limit, other))
         {
-            if (parameters.LengthLimitsAsked) notMet.Add(new LimitNotMet(limit, FixedCode.BitsPerSymbol(facts.SymbolsInUse)));
+            if (parameters.LengthLimitsAsked) notMet.Add(new LimitNotMet(limit, FixedCode.Width(facts.SymbolsInUse)));
             return;
         }
         if (same)
@@ -115,10 +116,10 @@ internal sealed class CodeLadder(RunParameters parameters)
 
     private static void AddRange(ViewFacts facts, PriceMaker price, List<CodePrice> prices)
     {
-        int log = RangeCoder.FrequencyBitsFor(facts.Symbols, facts.SymbolsInUse);
+        int log = RangeFrequencyBits.For(facts.Symbols, facts.SymbolsInUse);
         Span<int> frequencies = facts.AlphabetSize <= 256 ? stackalloc int[facts.AlphabetSize] : new int[facts.AlphabetSize];
         if (!QuantizedFrequencies.TryFit(facts.Counts, log, frequencies)) return;
-        prices.Add(price.Make("range", RangeCoder.PayloadBits(facts.Counts, frequencies, log), Rfc8878FseDistribution.Bits(frequencies, log), TableFormat.Rfc8878FseDistribution.Name()) with
+        prices.Add(price.Make("range", RangePrice.PayloadBits(facts.Counts, frequencies, log), Rfc8878FseDistribution.Bits(frequencies, log), TableFormat.Rfc8878FseDistribution.Name()) with
         {
             Parameter = log,
             Exact = false,

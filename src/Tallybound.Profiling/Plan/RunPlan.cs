@@ -33,14 +33,15 @@ public sealed record RunPlan
     /// <exception cref="OperationCanceledException">The walk was stopped.</exception>
     public static RunPlan Freeze(RunParameters parameters, CancellationToken stop)
     {
-        WalkResult walk = SourceWalk.Find(new SourceRequest(parameters.Inputs, parameters.Include, parameters.Exclude), stop);
+        ArgumentNullException.ThrowIfNull(parameters);
+        WalkResult walk = SourceWalk.Find(new SourceRequest(parameters.Inputs, parameters.Include, parameters.Exclude, parameters.Inside), stop);
         List<PlanEntry> entries =
         [
             .. walk.Sources.Select(found => PlanEntry.ToRead(found)),
             .. walk.Skipped.Select(skipped => PlanEntry.Decided(skipped.Name, SourceStatus.Skipped, skipped.Reason)),
             .. walk.Failed.Select(failed => PlanEntry.Decided(failed.Name, SourceStatus.Failed, failed.Reason)),
         ];
-        entries.Sort((a, b) => string.CompareOrdinal(a.Name, b.Name));
+        entries.Sort((a, b) => NameOrder.Compare(a.Name, b.Name));
         return new RunPlan
         {
             Parameters = parameters,

@@ -21,6 +21,16 @@ internal sealed class TallyReader : IDisposable
         if (found != (long)kind) throw new InvalidDataException($"The tally is of kind {found}; kind {(long)kind} ({kind}) was expected.");
     }
 
+    /// <summary>What kind of tally a stream begins with; the stream is left behind its head.</summary>
+    /// <exception cref="InvalidDataException">The stream does not begin as a tally.</exception>
+    public static TallyKind KindOf(Stream stream)
+    {
+        Span<byte> head = stackalloc byte[TallyWriter.Magic.Length + 2];
+        if (stream.ReadAtLeast(head, head.Length, throwOnEndOfStream: false) < head.Length || !head.StartsWith(TallyWriter.Magic))
+            throw new InvalidDataException("This is no tally: it does not begin with the tally mark.");
+        return (TallyKind)head[^1];
+    }
+
     /// <summary>A number of at least 0.</summary>
     /// <param name="what">What it is, for the error.</param>
     /// <param name="largest">Greatest value allowed.</param>

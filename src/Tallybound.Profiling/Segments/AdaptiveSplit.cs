@@ -29,7 +29,7 @@ public static class AdaptiveSplit
             long cellBytes = source.SegmentBytes;
             for (; cells > MostCells; cellBytes *= 2) cells = BlockSizeCurve.MergePairs(counts, cells, alphabetSize);
             Span<long> merged = counts.AsSpan(0, cells * alphabetSize);
-            List<int> starts = SplitSearch.Starts(merged, alphabetSize, FlatTableBits(source));
+            List<int> starts = SplitSearch.Starts(merged, alphabetSize, TableBits(source));
             return Profile(PriceStretches(merged, alphabetSize, starts), starts, cellBytes, CheapestExact(curve));
         }
         finally
@@ -38,16 +38,21 @@ public static class AdaptiveSplit
         }
     }
 
-    /// <summary>A flat table as long as the whole source's stands for every stretch's.</summary>
-    private static long FlatTableBits(SegmentCounts source)
+    /// <summary>A flat table as long as the whole source's stands for every stretch's; above 4 GiB, what the estimate of the whole may be off, lest noise be taken for a change.</summary>
+    private static long TableBits(SegmentCounts source)
     {
         Span<long> whole = stackalloc long[source.AlphabetSize];
         Span<byte> lengths = stackalloc byte[source.AlphabetSize];
         source.Sum(whole);
         Huffman.Lengths(whole, lengths);
         int longest = 0;
-        foreach (byte length in lengths) longest = Math.Max(longest, length);
-        return FlatTable.Bits(source.AlphabetSize, longest);
+        long symbols = 0;
+        for (int symbol = 0; symbol < whole.Length; symbol++)
+        {
+            longest = Math.Max(longest, lengths[symbol]);
+            symbols += whole[symbol];
+        }
+        return Math.Max(FlatTable.Bits(source.AlphabetSize, longest), (long)(symbols * SplitCells.Error));
     }
 
     private static FormatChain PriceStretches(ReadOnlySpan<long> counts, int alphabetSize, List<int> starts)

@@ -59,8 +59,13 @@ public static class SegmentPricing
     /// <param name="source">The segments.</param>
     /// <param name="seed">Recorded beside the figure.</param>
     /// <returns>Bits a symbol; null below 16 segments.</returns>
-    public static Estimate? EntropyInterval(SegmentCounts source, ulong seed) =>
-        MovingBlockBootstrap.OfCounts(source.All, source.AlphabetSize, Entropy.BitsPerSymbol, seed);
+    public static Estimate? EntropyInterval(SegmentCounts source, ulong seed)
+    {
+        if (MovingBlockBootstrap.OfCounts(source.All, source.AlphabetSize, WeightedLogarithm.BitsPerSymbol, seed) is not { } interval) return null;
+        Span<long> whole = stackalloc long[source.AlphabetSize];
+        source.Sum(whole);
+        return interval with { Value = Entropy.BitsPerSymbol(whole) };
+    }
 
     private static void FillSeries(SegmentCounts source, ReadOnlySpan<long> whole, long[] ownBits, long[] sourceBits, long[] previousBits, double[] divergence)
     {

@@ -1,4 +1,5 @@
 using System.Buffers;
+using System.Runtime.Intrinsics;
 
 namespace Tallybound.Profiling.Segments;
 
@@ -7,23 +8,24 @@ namespace Tallybound.Profiling.Segments;
 /// reported is priced exactly afterwards.</remarks>
 internal static class SplitSearch
 {
-    /// <summary>The stretches of the cheapest division.</summary>
-    /// <param name="counts">Counts of merged segments, one after the other.</param>
-    /// <param name="alphabetSize">A.</param>
-    /// <param name="tableBits">What a table is taken to cost.</param>
+    /// <summary>The stretches of the cheapest division; of equal ones the one whose last stretch is longest.</summary>
+    /// <param name="counts">Counts of merged segments, one after the other, none without symbols.</param>
+    /// <param name="alphabetSize">A, at most 256.</param>
+    /// <param name="tableBits">What a table is taken to cost; at least what the estimate may be off.</param>
     /// <returns>The first merged segment of each stretch, ascending, 0 first.</returns>
     public static List<int> Starts(ReadOnlySpan<long> counts, int alphabetSize, long tableBits)
     {
-        int cells = counts.Length / alphabetSize;
-        double[] least = ArrayPool<double>.Shared.Rent(cells + 1);
-        int[] lastStart = ArrayPool<int>.Shared.Rent(cells + 1);
+        using var cells = new SplitCells(counts, alphabetSize);
+        double[] least = ArrayPool<double>.Shared.Rent(cells.Count + 1);
+        int[] lastStart = ArrayPool<int>.Shared.Rent(cells.Count + 1);
         try
         {
-            least.AsSpan(0, cells + 1).Fill(double.PositiveInfinity);
+            least.AsSpan(0, cells.Count + 1).Fill(double.PositiveInfinity);
             least[0] = 0;
-            for (int start = 0; start < cells; start++) Extend(counts, alphabetSize, tableBits, start, least, lastStart);
+            int plainBits = TableBlockPricer.PlainBits(alphabetSize);
+            for (int start = 0; start < cells.Count; start++) TryStretches(cells, start, plainBits, tableBits, least, lastStart);
             var starts = new List<int>();
-            for (int end = cells; end > 0; end = lastStart[end]) starts.Add(lastStart[end]);
+            for (int end = cells.Count; end > 0; end = lastStart[end]) starts.Add(lastStart[end]);
             starts.Reverse();
             return starts;
         }
@@ -34,32 +36,20 @@ internal static class SplitSearch
         }
     }
 
-    /// <summary>Tries every stretch from <paramref name="start"/>; its way there is settled, as starts come in order.</summary>
-    private static void Extend(ReadOnlySpan<long> counts, int alphabetSize, long tableBits, int start, Span<double> least, Span<int> lastStart)
+    /// <summary>Tries every stretch from <paramref name="start"/>, whose own way is settled, as starts come in order.</summary>
+    private static void TryStretches(SplitCells cells, int start, int plainBits, long tableBits, Span<double> least, Span<int> lastStart)
     {
-        Span<long> sum = stackalloc long[alphabetSize];
-        Span<double> weighted = stackalloc double[alphabetSize];
-        sum.Clear();
-        weighted.Clear();
-        int plainBits = TableBlockPricer.PlainBits(alphabetSize), inUse = 0;
+        Span<Vector256<float>> stretch = cells.Stretch;
+        stretch.Clear();
         long symbols = 0;
-        double weightedLogarithms = 0, before = least[start];
-        for (int end = start + 1, at = start * alphabetSize; at < counts.Length; end++, at += alphabetSize)
+        int only = cells[start].Only;
+        for (int cell = start; cell < cells.Count; cell++)
         {
-            ReadOnlySpan<long> cell = counts.Slice(at, alphabetSize);
-            for (int symbol = 0; symbol < cell.Length; symbol++)
-            {
-                long count = cell[symbol];
-                if (count == 0) continue;
-                symbols += count;
-                if (sum[symbol] == 0) inUse++;
-                double grown = WeightedLogarithm.Of(sum[symbol] += count);
-                weightedLogarithms += grown - weighted[symbol];
-                weighted[symbol] = grown;
-            }
-            double plain = inUse == 1 ? plainBits : (double)symbols * plainBits;
-            double bits = before + Math.Min(plain, WeightedLogarithm.Of(symbols) - weightedLogarithms + tableBits);
-            if (bits < least[end]) (least[end], lastStart[end]) = (bits, start);
+            symbols += cells[cell].Symbols;
+            if (cells[cell].Only != only) only = -1;
+            double coded = cells.Extend(cell, stretch, symbols) + tableBits, plain = only >= 0 ? plainBits : (double)symbols * plainBits;
+            double bits = least[start] + Math.Min(plain, coded);
+            if (bits < least[cell + 1]) (least[cell + 1], lastStart[cell + 1]) = (bits, start);
         }
     }
 }

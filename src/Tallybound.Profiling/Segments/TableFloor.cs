@@ -9,8 +9,8 @@ internal static class TableFloor
     /// <summary>RFC 1951 §3.2.7: HLIT, HDIST, HCLEN and the four lengths that are always sent.</summary>
     private const int DynamicHeaderHead = 5 + 5 + 4 + (4 * 3);
 
-    /// <summary>RFC 8878 §4.2.1: the byte that says how the weights follow, and at least one byte of them.</summary>
-    private const int HuffmanWeightsHead = 16;
+    /// <summary>RFC 8878 §4.2.1: the byte that says how the weights follow.</summary>
+    private const int HuffmanWeightsHead = 8;
 
     /// <summary>The floor from the number of symbols in use alone: some word has ⌈log2 m⌉ bits or more.</summary>
     public static long Before(TableFormat format, int alphabetSize, int inUse) => format switch
@@ -27,6 +27,7 @@ internal static class TableFloor
     public static long Of(TableFormat format, ReadOnlySpan<byte> lengths) => format switch
     {
         TableFormat.Rfc1951DynamicHeader => DynamicHeaderHead + DynamicHeaderTokens(lengths),
+        TableFormat.Rfc8878HuffmanWeights => HuffmanWeightsHead + HuffmanWeightsSteps(lengths),
         _ => 0,
     };
 
@@ -49,5 +50,16 @@ internal static class TableFloor
         int coded = runs - heads[0];
         bits += WeightedLogarithm.Of(coded);
         return Math.Max(runs, (long)(bits * (1 - 1e-6)));
+    }
+
+    /// <summary>All weights but the last symbol's are sent, 4 bits each or by two states. A step of a state reads no bit only for a weight that has more than half of the cells;
+    /// there is one such weight at most. The first two weights cost nothing.</summary>
+    private static long HuffmanWeightsSteps(ReadOnlySpan<byte> lengths)
+    {
+        int last = lengths.LastIndexOfAnyExcept((byte)0), commonest = 0;
+        Span<int> sent = stackalloc int[256];
+        sent.Clear();
+        for (int symbol = 0; symbol < last; symbol++) commonest = Math.Max(commonest, ++sent[lengths[symbol]]);
+        return Math.Max(0, last - 2 - commonest);
     }
 }

@@ -14,6 +14,15 @@ internal static class CanonicalWords
         for (int symbol = 0; symbol < lengths.Length; symbol++) words[symbol] = lengths[symbol] == 0 ? (ushort)0 : next[lengths[symbol]]++;
     }
 
+    /// <summary>Refuses lengths read from a table that ask for more words than there are.</summary>
+    /// <exception cref="InvalidDataException">The Kraft sum is above 1.</exception>
+    public static void RequireRoom(ReadOnlySpan<byte> lengths)
+    {
+        int taken = 0;
+        foreach (byte length in lengths) taken += length == 0 ? 0 : 1 << (LongestWord - length);
+        if (taken > 1 << LongestWord) throw new InvalidDataException("The table's inner code has more words than its lengths allow.");
+    }
+
     /// <summary>The word with its first bit least significant, as RFC 1951 §3.1.1 packs Huffman codes.</summary>
     public static ulong Reverse(ushort word, int bits)
     {

@@ -87,6 +87,7 @@ public static class Rfc1951DynamicHeader
         Span<byte> precode = stackalloc byte[PrecodeSymbols];
         precode.Clear();
         foreach (byte symbol in PrecodeOrder[..sent]) precode[symbol] = (byte)reader.Read(PrecodeLengthBits);
+        CanonicalWords.RequireRoom(precode);
         Span<ushort> words = stackalloc ushort[PrecodeSymbols];
         CanonicalWords.Assign(precode, words);
         byte[] lengths = new byte[literals + distances];

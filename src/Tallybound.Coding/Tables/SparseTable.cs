@@ -106,6 +106,7 @@ public static partial class SparseTable
             lengths.Fill((byte)(inner.IndexOfAnyExcept((byte)0) + 1));
             return;
         }
+        CanonicalWords.RequireRoom(inner);
         Span<ushort> words = stackalloc ushort[longest];
         CanonicalWords.Assign(inner, words);
         for (int i = 0; i < lengths.Length; i++)

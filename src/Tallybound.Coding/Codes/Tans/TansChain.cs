@@ -1,4 +1,6 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
+using System.Runtime.InteropServices;
 
 namespace Tallybound.Coding.Codes.Tans;
 
@@ -16,12 +18,11 @@ internal sealed class TansChain
     private int size;
     private int inUse;
     private int[] symbolOfCell = [];
-    private int[] cellsBySymbol = [];
-    private double[] weights = [];
+    private uint[] origins = [];
+    private double[] chances = [];
     private double[] sums = [];
-    private int[] slots = [];
-    private Symbol[] symbols = [];
-    private Origin[] origins = [];
+    private double[] nextSums = [];
+    private Slot[] slots = [];
 
     /// <summary>One chain a thread: its arrays serve one price after another.</summary>
     public static TansChain OfThisThread => t_chain ??= new TansChain();
@@ -35,16 +36,11 @@ internal sealed class TansChain
     {
         Lay(counts, frequencies, tableLog);
         double rate = Rate();
-        bool creeping = false;
+        bool creeping = rate < 1;
         for (int step = 0, calm = 0; step < MostSteps && calm < 2; step++)
         {
             double before = rate;
-            if (!creeping && (before < 1 || step == MostPlainSteps))
-            {
-                FindOrigins();
-                creeping = true;
-            }
-            if (creeping) StepInPlace();
+            if (creeping || step >= MostPlainSteps) StepInPlace();
             else Step();
             rate = Rate();
             calm = Math.Abs(rate - before) <= settled ? calm + 1 : 0;
@@ -52,32 +48,38 @@ internal sealed class TansChain
         return rate;
     }
 
-    /// <summary>Lays out the cells by symbol, in ascending order, and the starting weights.</summary>
+    /// <summary>Finds for every cell the states from which it is reached, and sets the starting weights.</summary>
     private void Lay(ReadOnlySpan<long> counts, ReadOnlySpan<int> frequencies, int tableLog)
     {
         size = 1 << tableLog;
-        if (sums.Length <= size)
+        if (origins.Length < size)
         {
-            (symbolOfCell, cellsBySymbol, weights, sums) = (new int[size], new int[size], new double[size], new double[size + 1]);
-            (symbols, origins) = (new Symbol[size], new Origin[size]);
+            (symbolOfCell, origins, chances) = (new int[size], new uint[size], new double[size]);
+            (sums, nextSums) = (new double[size + 1], new double[size + 1]);
         }
-        if (slots.Length < counts.Length) slots = new int[counts.Length];
+        if (slots.Length < counts.Length) slots = new Slot[counts.Length];
         TansSpread.Fill(frequencies, tableLog, symbolOfCell.AsSpan(0, size));
         double total = 0;
         foreach (long count in counts) total += count;
-        inUse = 0;
-        for (int symbol = 0, cells = 0; symbol < counts.Length; symbol++)
+        inUse = counts.Length;
+        for (int symbol = 0; symbol < counts.Length; symbol++)
         {
             int frequency = frequencies[symbol];
             if (counts[symbol] > 0 && frequency == 0) throw new ArgumentException($"Symbol {symbol} is in use and has no cell.", nameof(frequencies));
-            if (frequency == 0) continue;
-            symbols[inUse++] = new Symbol(counts[symbol] / total, frequency, cells, tableLog - BitOperations.Log2((uint)frequency));
-            slots[symbol] = cells;
-            cells += frequency;
+            int mostBits = tableLog - BitOperations.Log2((uint)frequency | 1);
+            slots[symbol] = new Slot(counts[symbol] / total, frequency, mostBits, frequency == 0 ? 0 : (frequency << mostBits) - size);
         }
-        Span<int> next = slots, bySymbol = cellsBySymbol;
+        Span<Slot> ofSymbol = slots.AsSpan(0, counts.Length);
         ReadOnlySpan<int> ofCell = symbolOfCell.AsSpan(0, size);
-        for (int cell = 0; cell < ofCell.Length; cell++) bySymbol[next[ofCell[cell]]++] = cell;
+        Span<uint> from = origins.AsSpan(0, size);
+        Span<double> chance = chances.AsSpan(0, size);
+        for (int cell = 0; cell < ofCell.Length; cell++)
+        {
+            ref Slot slot = ref ofSymbol[ofCell[cell]];
+            int rank = slot.NextRank++, bits = tableLog - BitOperations.Log2((uint)rank), first = (rank << bits) - size;
+            from[cell] = ((uint)(first + (1 << bits) - 1) << 16) | (uint)first;
+            chance[cell] = slot.Chance;
+        }
         StartWeights.Of(tableLog).CopyTo(sums.AsSpan(0, size + 1));
     }
 
@@ -85,75 +87,41 @@ internal sealed class TansChain
     private double Rate()
     {
         double rate = 0;
-        foreach (ref readonly Symbol symbol in symbols.AsSpan(0, inUse)) rate += symbol.Chance * (symbol.MostBits - sums[(symbol.Frequency << symbol.MostBits) - size]);
+        foreach (ref readonly Slot slot in slots.AsSpan(0, inUse)) rate += slot.Chance * (slot.MostBits - sums[slot.MostBitsFrom]);
         return rate;
     }
 
+    /// <summary>Four quarters of the cells are summed side by side, for an addition waits on the one before it.</summary>
     private void Step()
     {
-        ReadOnlySpan<double> before = sums.AsSpan(0, size + 1);
-        Span<double> after = weights.AsSpan(0, size);
-        foreach (ref readonly Symbol symbol in symbols.AsSpan(0, inUse))
-        {
-            int bits = symbol.MostBits, rank = symbol.Frequency, ranksOfMostBits = Math.Min(2 * rank, 1 << (BitOperations.Log2((uint)rank) + 1));
-            ReadOnlySpan<int> cells = cellsBySymbol.AsSpan(symbol.FirstCell, rank);
-            double chance = symbol.Chance, low = before[(rank << bits) - size];
-            int at = 0;
-            for (int end = ((rank + 1) << bits) - size; rank < ranksOfMostBits; rank++, end += 1 << bits)
-            {
-                double high = before[end];
-                after[cells[at++]] = chance * (high - low);
-                low = high;
-            }
-            if (at == cells.Length) continue;
-            bits--;
-            low = before[0];
-            for (int end = ((rank + 1) << bits) - size; at < cells.Length; end += 1 << bits)
-            {
-                double high = before[end];
-                after[cells[at++]] = chance * (high - low);
-                low = high;
-            }
-        }
-        Accumulate();
-    }
-
-    /// <summary>Four quarters are summed side by side, for an addition waits on the one before it.</summary>
-    private void Accumulate()
-    {
         int quarter = size / 4;
-        Span<double> first = sums.AsSpan(1, quarter), second = sums.AsSpan(1 + quarter, quarter), third = sums.AsSpan(1 + (2 * quarter), quarter), fourth = sums.AsSpan(1 + (3 * quarter), quarter);
-        ReadOnlySpan<double> weight1 = weights.AsSpan(0, quarter), weight2 = weights.AsSpan(quarter, quarter), weight3 = weights.AsSpan(2 * quarter, quarter), weight4 = weights.AsSpan(3 * quarter, quarter);
+        ref double before = ref MemoryMarshal.GetArrayDataReference(sums), after = ref MemoryMarshal.GetArrayDataReference(nextSums), chance = ref MemoryMarshal.GetArrayDataReference(chances);
+        ref uint origin = ref MemoryMarshal.GetArrayDataReference(origins);
         double sum1 = 0, sum2 = 0, sum3 = 0, sum4 = 0;
-        for (int i = 0; i < quarter; i++)
+        for (int cell1 = 0, cell2 = quarter, cell3 = 2 * quarter, cell4 = 3 * quarter; cell1 < quarter; cell1++, cell2++, cell3++, cell4++)
         {
-            first[i] = sum1 += weight1[i];
-            second[i] = sum2 += weight2[i];
-            third[i] = sum3 += weight3[i];
-            fourth[i] = sum4 += weight4[i];
+            sum1 += Unsafe.Add(ref chance, cell1) * Between(ref before, Unsafe.Add(ref origin, cell1));
+            sum2 += Unsafe.Add(ref chance, cell2) * Between(ref before, Unsafe.Add(ref origin, cell2));
+            sum3 += Unsafe.Add(ref chance, cell3) * Between(ref before, Unsafe.Add(ref origin, cell3));
+            sum4 += Unsafe.Add(ref chance, cell4) * Between(ref before, Unsafe.Add(ref origin, cell4));
+            Unsafe.Add(ref after, cell1 + 1) = sum1;
+            Unsafe.Add(ref after, cell2 + 1) = sum2;
+            Unsafe.Add(ref after, cell3 + 1) = sum3;
+            Unsafe.Add(ref after, cell4 + 1) = sum4;
         }
-        sum2 += sum1;
-        sum3 += sum2;
-        for (int i = 0; i < quarter; i++)
-        {
-            second[i] += sum1;
-            third[i] += sum2;
-            fourth[i] += sum3;
-        }
+        Raise(nextSums.AsSpan(1 + quarter, quarter), sum1);
+        Raise(nextSums.AsSpan(1 + (2 * quarter), quarter), sum1 + sum2);
+        Raise(nextSums.AsSpan(1 + (3 * quarter), quarter), sum1 + sum2 + sum3);
+        (sums, nextSums) = (nextSums, sums);
     }
 
-    private void FindOrigins()
+    /// <summary>Both ends of an origin are below 2^R, and the sums have one entry more.</summary>
+    [MethodImpl(MethodImplOptions.AggressiveInlining)]
+    private static double Between(ref double before, uint origin) => Unsafe.Add(ref before, (nint)(origin >> 16) + 1) - Unsafe.Add(ref before, (nint)(origin & 0xFFFF));
+
+    private static void Raise(Span<double> sums, double by)
     {
-        foreach (ref readonly Symbol symbol in symbols.AsSpan(0, inUse))
-        {
-            for (int i = 0; i < symbol.Frequency; i++)
-            {
-                int rank = symbol.Frequency + i, bits = symbol.MostBits;
-                if (rank << bits >= 2 * size) bits--;
-                int first = (rank << bits) - size;
-                origins[cellsBySymbol[symbol.FirstCell + i]] = new Origin(symbol.Chance, first, first + (1 << bits));
-            }
-        }
+        foreach (ref double sum in sums) sum += by;
     }
 
     /// <summary>Sums up to the cell at hand are new ones; beyond it they are old ones, which count from the old sum at the cell.</summary>
@@ -161,13 +129,14 @@ internal sealed class TansChain
     {
         double total = 0, oldAtCell = 0;
         Span<double> running = sums.AsSpan(0, size + 1);
-        ReadOnlySpan<Origin> from = origins.AsSpan(0, size);
+        ReadOnlySpan<uint> from = origins.AsSpan(0, size);
+        ReadOnlySpan<double> chance = chances.AsSpan(0, size);
         for (int cell = 0; cell < from.Length; cell++)
         {
-            ref readonly Origin origin = ref from[cell];
-            double weight = running[origin.End] - running[origin.First];
-            if (origin.First <= cell && origin.End > cell) weight += total - oldAtCell;
-            total += origin.Chance * weight;
+            int first = (int)(from[cell] & 0xFFFF), end = (int)(from[cell] >> 16) + 1;
+            double weight = running[end] - running[first];
+            if (first <= cell && end > cell) weight += total - oldAtCell;
+            total += chance[cell] * weight;
             oldAtCell = running[cell + 1];
             running[cell + 1] = total;
         }
@@ -175,10 +144,8 @@ internal sealed class TansChain
         foreach (ref double sum in running) sum *= scale;
     }
 
-    private readonly record struct Symbol(double Chance, int Frequency, int FirstCell, int MostBits);
-
-    /// <summary>The states [First, End), as cells, from which a cell is reached by its symbol.</summary>
-    private readonly record struct Origin(double Chance, int First, int End);
+    /// <summary>A symbol's chance, the rank of its next cell, and the most bits it gives off, from which cell on.</summary>
+    private record struct Slot(double Chance, int NextRank, int MostBits, int MostBitsFrom);
 
     /// <summary>Sums of the weights log2((X + 1)/X) from state 2^R on, one table for every R.</summary>
     private static class StartWeights

@@ -27,14 +27,14 @@ public static class TansPrice
         }
     }
 
-    /// <summary>The same with given frequencies: each at least 1 where the symbol is in use, in all 2^R. The rate is followed until it moves the total by less than a thousandth of a bit.</summary>
+    /// <summary>The same with given frequencies: each at least 1 where the symbol is in use, in all 2^R. The rate is followed until it moves the total by no more than a hundredth of a bit.</summary>
     /// <exception cref="ArgumentException">The frequencies do not take 2^R cells, or a symbol in use has none.</exception>
     public static long PayloadBits(ReadOnlySpan<long> counts, ReadOnlySpan<int> frequencies, int tableLog)
     {
         double symbols = 0;
         foreach (long count in counts) symbols += count;
         if (symbols == 0) return tableLog;
-        double rate = TansChain.OfThisThread.SteadyRate(counts, frequencies, tableLog, Math.Max(1e-13, 1e-3 / symbols));
+        double rate = TansChain.OfThisThread.SteadyRate(counts, frequencies, tableLog, Math.Max(1e-13, 1e-2 / symbols));
         return (long)Math.Round(symbols * rate, MidpointRounding.AwayFromZero) + tableLog;
     }
 

@@ -53,14 +53,6 @@ public sealed class TansTable
     /// <summary>The cell that a decoder in this cell moves to when the bits it reads are all 0.</summary>
     public int BaselineOf(int cell) => (rankInFrequency[cell] << BitsOf(cell)) - (1 << TableLog);
 
-    /// <summary>The lowest cell of a symbol: the start of an encoder that takes its first symbol for free (RFC 8878 §4.2.1.2 ends its streams so).</summary>
-    /// <exception cref="ArgumentException">The symbol is not in use.</exception>
-    public int FirstCellOf(int symbol)
-    {
-        if (frequencies[symbol] == 0) throw new ArgumentException($"Symbol {symbol} has no cell.", nameof(symbol));
-        return cellsBySymbol[firstCell[symbol]];
-    }
-
     /// <summary>Codes one symbol from one cell.</summary>
     /// <returns>The next cell, and the bits given off.</returns>
     /// <exception cref="ArgumentException">The symbol is not in use.</exception>

@@ -102,6 +102,12 @@ public sealed class Rfc1951DynamicHeaderTests
             var reader = new LowBitReader([0, 0, 0]);
             Rfc1951DynamicHeader.DecodeBlock(ref reader);
         });
+        Assert.Throws<InvalidDataException>(() =>
+        {
+            // 14 bits of counts, then three precode words of one bit.
+            var reader = new LowBitReader([0, 0, 0b0100_1001, 0b0010_0100, 0, 0, 0]);
+            Rfc1951DynamicHeader.DecodeBlock(ref reader);
+        });
         Assert.Throws<ArgumentException>(() =>
         {
             var counter = default(BitCounter);

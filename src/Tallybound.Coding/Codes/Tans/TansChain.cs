@@ -7,10 +7,11 @@ namespace Tallybound.Coding.Codes.Tans;
 /// <summary>The Markov chain of an encoder's states under independent symbols, and its steady rate.</summary>
 /// <remarks>The states from which symbol s leads to one certain cell are neighbours, so a step of the chain needs prefix sums and no sum over symbols: 2^R operations.
 /// The start is the weight 1/X, which a table with ideally spread cells keeps. Where a symbol costs a bit or more, plain steps settle quickly. Where it costs less, the state creeps up through the
-/// table and plain steps would follow it round and round; steps that use the weights just set (Gauss–Seidel) take such a round trip at once.</remarks>
+/// table and plain steps would follow it round and round; steps that use the weights just set (Gauss–Seidel) take such a round trip at once.
+/// Chains of nearly equal powers of two forget their state slowly under either kind; from the fortieth step on the kinds alternate, and after a thousand the rate stands as it is.</remarks>
 internal sealed class TansChain
 {
-    private const int MostSteps = 2000, MostPlainSteps = 100;
+    private const int MostSteps = 1000, MostStepsOfOneKind = 40;
 
     [ThreadStatic]
     private static TansChain? t_chain;
@@ -40,7 +41,7 @@ internal sealed class TansChain
         for (int step = 0, calm = 0; step < MostSteps && calm < 2; step++)
         {
             double before = rate;
-            if (creeping || step >= MostPlainSteps) StepInPlace();
+            if (step < MostStepsOfOneKind ? creeping : (step & 1) == 0) StepInPlace();
             else Step();
             rate = Rate();
             calm = Math.Abs(rate - before) <= settled ? calm + 1 : 0;

@@ -38,7 +38,7 @@ public static class AdaptiveSplit
         }
     }
 
-    /// <summary>A flat table as long as the whole source's stands for every stretch's; above 4 GiB, what the estimate of the whole may be off, lest noise be taken for a change.</summary>
+    /// <summary>A flat table as long as the whole source's stands for every stretch's; above 1 GiB, what the estimate of the whole may be off, lest noise be taken for a change.</summary>
     private static long TableBits(SegmentCounts source)
     {
         Span<long> whole = stackalloc long[source.AlphabetSize];

@@ -1,16 +1,17 @@
 using System.Buffers;
+using System.Numerics;
 using System.Runtime.InteropServices;
 using System.Runtime.Intrinsics;
 
 namespace Tallybound.Profiling.Segments;
 
 /// <summary>Merged segments laid out for the split's search: the symbols in use only, eight to a vector, in single precision.</summary>
-/// <remarks>The search needs N·H0 of every stretch and no last digit of it: the error stays below 2^-22 bit a symbol. Nothing but IEEE sums, products and quotients in a
+/// <remarks>The search needs N·H0 of every stretch and no last digit of it: the error stays below 2^-20 bit a symbol. Nothing but IEEE sums, products and quotients in a
 /// fixed order is used, so every machine finds the same division.</remarks>
 internal sealed class SplitCells : IDisposable
 {
     /// <summary>Bits a symbol that an estimate may be off.</summary>
-    public const double Error = 1.0 / (1 << 22);
+    public const double Error = 1.0 / (1 << 20);
 
     private const int Lanes = 8;
 
@@ -18,7 +19,7 @@ internal sealed class SplitCells : IDisposable
     private readonly (long Symbols, int Only)[] cells;
     private readonly int width;
 
-    /// <param name="counts">Counts of merged segments, one after the other, none without symbols.</param>
+    /// <param name="counts">Counts of merged segments, one after the other; the first has a symbol.</param>
     /// <param name="alphabetSize">A, at most 256.</param>
     public SplitCells(ReadOnlySpan<long> counts, int alphabetSize)
     {
@@ -41,7 +42,7 @@ internal sealed class SplitCells : IDisposable
                 flat[(cell * width * Lanes) + i] = count;
             }
             int first = row.IndexOfAnyExcept(0L);
-            cells[cell] = (symbols, row[first] == symbols ? first : -1);
+            cells[cell] = (symbols, first >= 0 && row[first] == symbols ? first : -1);
         }
     }
 
@@ -67,7 +68,10 @@ internal sealed class SplitCells : IDisposable
     /// <param name="symbols">N of the sum.</param>
     public double Extend(int cell, Span<Vector256<float>> stretch, long symbols)
     {
-        Vector256<float> wholeLogarithm = Vector256.Create((float)Math.Log2(symbols));
+        if (symbols == 0) return 0;
+        // Whole exponents are taken from each other first, so that a large N costs no digit.
+        int exponent = BitOperations.Log2((ulong)symbols);
+        Vector256<float> wholeExponent = Vector256.Create((float)exponent), wholeFraction = Vector256.Create((float)Math.Log2(symbols / (double)(1L << exponent)));
         Vector256<double> low = Vector256<double>.Zero, high = Vector256<double>.Zero;
         ReadOnlySpan<Vector256<float>> row = rows.AsSpan(cell * width, width);
         stretch = stretch[..row.Length];
@@ -75,23 +79,24 @@ internal sealed class SplitCells : IDisposable
         {
             Vector256<float> count = stretch[i] + row[i];
             stretch[i] = count;
-            Vector256<float> information = count * (wholeLogarithm - Log2(count));
+            (Vector256<float> countExponent, Vector256<float> countFraction) = Log2(count);
+            Vector256<float> information = count * (wholeExponent - countExponent + (wholeFraction - countFraction));
             low += Vector256.WidenLower(information);
             high += Vector256.WidenUpper(information);
         }
         return Vector256.Sum(low + high);
     }
 
-    /// <summary>log2 with an error below 1e-7; for 0 some finite number, which a factor 0 takes away.</summary>
+    /// <summary>log2 as a whole number and a rest from −½ to ½ with an error below 1e-7; for 0 some finite numbers, which a factor 0 takes away.</summary>
     /// <remarks>The number is e·2^k with e from √½ to √2; log2 e = 2/ln 2 · artanh((e − 1)/(e + 1)), by four terms of its series (M. Abramowitz and I. Stegun, 4.1.27).</remarks>
-    private static Vector256<float> Log2(Vector256<float> value)
+    private static (Vector256<float> Exponent, Vector256<float> Fraction) Log2(Vector256<float> value)
     {
         Vector256<int> rootHalf = Vector256.Create(0x3f3504f3), above = value.AsInt32() - rootHalf;
         Vector256<float> exponent = Vector256.ConvertToSingle(Vector256.ShiftRightArithmetic(above, 23));
         Vector256<float> mantissa = ((above & Vector256.Create(0x7fffff)) + rootHalf).AsSingle(), one = Vector256<float>.One;
         Vector256<float> t = (mantissa - one) / (mantissa + one), square = t * t;
         Vector256<float> series = Vector256.Create(2.885390082f) + (square * (Vector256.Create(0.9617966939f) + (square * (Vector256.Create(0.5770780164f) + (square * Vector256.Create(0.4121985831f))))));
-        return exponent + (t * series);
+        return (exponent, t * series);
     }
 
     private static int ColumnsInUse(ReadOnlySpan<long> counts, int alphabetSize, Span<int> columns)

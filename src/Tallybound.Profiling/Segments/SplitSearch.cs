@@ -9,7 +9,7 @@ namespace Tallybound.Profiling.Segments;
 internal static class SplitSearch
 {
     /// <summary>The stretches of the cheapest division; of equal ones the one whose last stretch is longest.</summary>
-    /// <param name="counts">Counts of merged segments, one after the other, none without symbols.</param>
+    /// <param name="counts">Counts of merged segments, one after the other; the first has a symbol.</param>
     /// <param name="alphabetSize">A, at most 256.</param>
     /// <param name="tableBits">What a table is taken to cost; at least what the estimate may be off.</param>
     /// <returns>The first merged segment of each stretch, ascending, 0 first.</returns>

@@ -7,11 +7,13 @@ namespace Tallybound.Coding.Codes;
 /// <param name="LengthHistogram">How many of the m^n blocks get each length, 256 entries.</param>
 public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] LengthHistogram)
 {
+    private const double ExactAtMost = 1 << 16;
+
     /// <summary>The code of the extension.</summary>
     /// <param name="counts">n(s) of each symbol, at least one above 0.</param>
     /// <param name="blockLength">n, at least 1.</param>
     /// <remarks>Blocks whose symbols have the same counts weigh the same, so only combinations of different counts are listed, each with its number of blocks.
-    /// Weights are exact products where N^n fits 128 bits, else floating point.</remarks>
+    /// Weights are exact products where N^n fits 128 bits and combinations are few, else floating point, which changes the rate by less than 1 part in 10^14.</remarks>
     public static HuffmanExtension Of(ReadOnlySpan<long> counts, int blockLength)
     {
         ArgumentOutOfRangeException.ThrowIfLessThan(blockLength, 1);
@@ -20,7 +22,8 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] Lengt
         foreach (long count in counts) total += count;
         if (total == 0) throw new ArgumentException("No symbol is in use; an extension needs one.", nameof(counts));
         var histogram = new long[256];
-        double cost = BitOperations.Log2((ulong)total) * (double)blockLength + blockLength < 128
+        bool exact = ((BitOperations.Log2((ulong)total) + 1) * blockLength) <= 128 && Combinations(groups.Counts.Length, blockLength) <= ExactAtMost;
+        double cost = exact
             ? Cost(groups, blockLength, count => (UInt128)count, histogram)
             : Cost(groups, blockLength, count => (double)count, histogram);
         return new HuffmanExtension(cost / Math.Pow(total, blockLength) / blockLength, histogram);
@@ -30,11 +33,11 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] Lengt
         where TWeight : struct, INumber<TWeight>
     {
         TWeight[] bases = Array.ConvertAll(groups.Counts, count => weightOf(count));
-        var weights = new List<TWeight>();
-        var times = new List<long>();
-        List(bases, groups.Times, blockLength, 0, TWeight.One, 1, weights, times);
-        TWeight[] sorted = [.. weights];
-        long[] many = [.. times];
+        int combinations = checked((int)Combinations(bases.Length, blockLength));
+        var sorted = new TWeight[combinations];
+        var many = new long[combinations];
+        int listed = 0;
+        List(bases, groups.Times, blockLength, 0, TWeight.One, 1, sorted, many, ref listed);
         Array.Sort(sorted, many);
         int used = Unite(sorted, many);
         ApproximateCost<TWeight> cost = default;
@@ -43,26 +46,24 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] Lengt
     }
 
     /// <summary>Lists each multiset of n count groups once, with the number of blocks that have it.</summary>
-    private static void List<TWeight>(TWeight[] bases, long[] sizes, int left, int from, TWeight weight, long blocks, List<TWeight> weights, List<long> times)
+    private static void List<TWeight>(TWeight[] bases, long[] sizes, int left, int from, TWeight weight, long blocks, TWeight[] weights, long[] times, ref int listed)
         where TWeight : struct, INumber<TWeight>
     {
         if (left == 0)
         {
-            weights.Add(weight);
-            times.Add(blocks);
+            (weights[listed], times[listed++]) = (weight, blocks);
             return;
         }
         if (from == bases.Length - 1)
         {
             for (int i = 0; i < left; i++) (weight, blocks) = (weight * bases[from], blocks * sizes[from]);
-            weights.Add(weight);
-            times.Add(blocks);
+            (weights[listed], times[listed++]) = (weight, blocks);
             return;
         }
         for (int take = 0; take <= left; take++)
         {
             // The places of the symbols taken: a binomial of what is left; the size of the group for each.
-            List(bases, sizes, left - take, from + 1, weight, blocks * Binomial(left, take), weights, times);
+            List(bases, sizes, left - take, from + 1, weight, blocks * Binomial(left, take), weights, times, ref listed);
             (weight, blocks) = (weight * bases[from], blocks * sizes[from]);
         }
     }
@@ -82,6 +83,14 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] Lengt
             used++;
         }
         return used;
+    }
+
+    /// <summary>Multisets of n out of the groups.</summary>
+    private static double Combinations(int groups, int n)
+    {
+        double value = 1;
+        for (int i = 1; i <= n; i++) value = value * (groups + i - 1) / i;
+        return Math.Round(value);
     }
 
     private static long Binomial(int n, int k)

@@ -7,12 +7,6 @@ namespace Tallybound.Coding.Codes;
 /// leaves and packages are paired is that of <see cref="Huffman"/>, and so is the histogram of lengths.</remarks>
 internal static class WeightRuns
 {
-    /// <summary>One step: packages made from two items each.</summary>
-    /// <param name="First">Index of the run of the first item: leaves first, packages after them.</param>
-    /// <param name="Second">Index of the run of the second item.</param>
-    /// <param name="Made">How many packages.</param>
-    private readonly record struct Step(int First, int Second, long Made);
-
     /// <summary>Builds the code.</summary>
     /// <param name="weights">Different weights, ascending, each above 0.</param>
     /// <param name="times">How many symbols have each, at least 1.</param>
@@ -29,96 +23,68 @@ internal static class WeightRuns
             cost.Add(weights[0], 1);
             return;
         }
-        var steps = new List<Step>(2 * weights.Length);
+        var steps = new MergeSteps(weights.Length);
         Merge(weights, times, steps, ref cost);
-        Depths(weights.Length, steps, histogram);
+        steps.CountDepths(histogram);
     }
 
-    private static void Merge<TWeight, TCost>(ReadOnlySpan<TWeight> weights, ReadOnlySpan<long> times, List<Step> steps, ref TCost cost)
+    private static void Merge<TWeight, TCost>(ReadOnlySpan<TWeight> weights, ReadOnlySpan<long> times, MergeSteps steps, ref TCost cost)
         where TWeight : struct, INumber<TWeight>
         where TCost : struct, IPackageCost<TWeight>
     {
-        int leaves = weights.Length, leaf = 0, package = 0;
+        var packages = new Queue<(TWeight Weight, long Times)>();
+        int leaf = 0, package = -1;
         long leafLeft = times[0], packageLeft = 0;
-        var packages = new List<(TWeight Weight, long Times)>(2 * leaves);
+        TWeight packageWeight = default;
         while (true)
         {
-            if (packageLeft == 0 && package < packages.Count) packageLeft = packages[package].Times;
-            bool leafFirst = leaf < leaves && (packageLeft == 0 || weights[leaf] <= packages[package].Weight);
-            TWeight weight = leafFirst ? weights[leaf] : packages[package].Weight;
-            int first = leafFirst ? leaf : leaves + package;
-            ref long left = ref leafFirst ? ref leafLeft : ref packageLeft;
+            bool firstIsLeaf = TakesLeaf(weights);
+            TWeight weight = firstIsLeaf ? weights[leaf] : packageWeight;
+            int first = firstIsLeaf ? leaf : weights.Length + package;
+            long left = firstIsLeaf ? leafLeft : packageLeft;
             if (left > 1)
             {
-                long made = left / 2;
-                left -= 2 * made;
-                TWeight pair = weight + weight;
-                packages.Add((pair, made));
-                steps.Add(new Step(first, first, made));
-                cost.Add(pair, made);
-            }
-            else
-            {
-                left = 0;
-                Advance(leafFirst, ref leaf, ref package, ref leafLeft, times);
-                if (packageLeft == 0 && package < packages.Count) packageLeft = packages[package].Times;
-                if (leaf == leaves && packageLeft == 0) return;
-                bool secondLeaf = leaf < leaves && (packageLeft == 0 || weights[leaf] <= packages[package].Weight);
-                TWeight sum = weight + (secondLeaf ? weights[leaf] : packages[package].Weight);
-                packages.Add((sum, 1));
-                steps.Add(new Step(first, secondLeaf ? leaf : leaves + package, 1));
-                cost.Add(sum, 1);
-                left = ref secondLeaf ? ref leafLeft : ref packageLeft;
-                left--;
-                if (left == 0) Advance(secondLeaf, ref leaf, ref package, ref leafLeft, times);
+                Use(firstIsLeaf, left / 2 * 2, times);
+                Add(weight + weight, left / 2, first, first, ref cost);
                 continue;
             }
-            if (left == 0) Advance(leafFirst, ref leaf, ref package, ref leafLeft, times);
+            Use(firstIsLeaf, 1, times);
+            if (leaf == weights.Length && packageLeft == 0) return;
+            bool secondIsLeaf = TakesLeaf(weights);
+            TWeight sum = weight + (secondIsLeaf ? weights[leaf] : packageWeight);
+            int second = secondIsLeaf ? leaf : weights.Length + package;
+            Use(secondIsLeaf, 1, times);
+            Add(sum, 1, first, second, ref cost);
         }
-    }
 
-    private static void Advance(bool ofLeaves, ref int leaf, ref int package, ref long leafLeft, ReadOnlySpan<long> times)
-    {
-        if (!ofLeaves)
-        {
-            package++;
-            return;
-        }
-        leaf++;
-        leafLeft = leaf < times.Length ? times[leaf] : 0;
-    }
+        bool TakesLeaf(ReadOnlySpan<TWeight> of) => leaf < of.Length && (packageLeft == 0 || of[leaf] <= packageWeight);
 
-    /// <summary>Walks the steps from the root down. The items of a run are used up in order, so its depths are runs too; they are gathered last item first.</summary>
-    private static void Depths(int leaves, List<Step> steps, Span<long> histogram)
-    {
-        var depths = new List<(int Depth, long Times)>?[steps.Count];
-        depths[^1] = [(0, 1)];
-        for (int step = steps.Count - 1; step >= 0; step--)
+        // Takes items off the head of a queue, and brings the next run to the head when it is used up.
+        void Use(bool ofLeaves, long items, ReadOnlySpan<long> leafTimes)
         {
-            Step made = steps[step];
-            foreach ((int depth, long times) in depths[step]!)
+            if (ofLeaves)
             {
-                if (made.First == made.Second)
-                {
-                    Give(made.First, depth + 1, 2 * times, histogram);
-                    continue;
-                }
-                Give(made.Second, depth + 1, times, histogram);
-                Give(made.First, depth + 1, times, histogram);
-            }
-            depths[step] = null;
-        }
-
-        void Give(int run, int depth, long times, Span<long> into)
-        {
-            if (run < leaves)
-            {
-                into[depth] += times;
+                leafLeft -= items;
+                if (leafLeft == 0 && ++leaf < leafTimes.Length) leafLeft = leafTimes[leaf];
                 return;
             }
-            List<(int Depth, long Times)> list = depths[run - leaves] ??= new List<(int, long)>(1);
-            if (list.Count > 0 && list[^1].Depth == depth) list[^1] = (depth, list[^1].Times + times);
-            else list.Add((depth, times));
+            packageLeft -= items;
+            if (packageLeft == 0) NextPackage();
+        }
+
+        void Add(TWeight packed, long made, int one, int two, ref TCost to)
+        {
+            packages.Enqueue((packed, made));
+            steps.Add(one, two, made);
+            to.Add(packed, made);
+            if (packageLeft == 0) NextPackage();
+        }
+
+        void NextPackage()
+        {
+            if (!packages.TryDequeue(out (TWeight Weight, long Times) next)) return;
+            package++;
+            (packageWeight, packageLeft) = next;
         }
     }
 }

@@ -4,10 +4,12 @@ namespace Tallybound.Coding.Codes;
 
 /// <summary>The Huffman code of the n-th extension of a memoryless source: what coding n symbols as one wins back of the loss by whole lengths.</summary>
 /// <param name="ExpectedBitsPerSymbol">Expected length ÷ n.</param>
-/// <param name="LengthHistogram">How many of the m^n blocks get each length, 256 entries.</param>
-public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] LengthHistogram)
+/// <param name="LengthHistogram">How many of the m^n blocks get each length, 256 entries; null where there are more than 2^18 combinations of different counts, whose lengths would
+/// take hundreds of megabytes to find for a table that no one sends.</param>
+public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[]? LengthHistogram)
 {
     private const double ExactAtMost = 1 << 16;
+    private const double LengthsAtMost = 1 << 18;
 
     /// <summary>The code of the extension.</summary>
     /// <param name="counts">n(s) of each symbol, at least one above 0.</param>
@@ -21,15 +23,16 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[] Lengt
         long total = 0;
         foreach (long count in counts) total += count;
         if (total == 0) throw new ArgumentException("No symbol is in use; an extension needs one.", nameof(counts));
-        var histogram = new long[256];
-        bool exact = ((BitOperations.Log2((ulong)total) + 1) * blockLength) <= 128 && Combinations(groups.Counts.Length, blockLength) <= ExactAtMost;
+        double combinations = Combinations(groups.Counts.Length, blockLength);
+        long[]? histogram = combinations <= LengthsAtMost ? new long[256] : null;
+        bool exact = ((BitOperations.Log2((ulong)total) + 1) * blockLength) <= 128 && combinations <= ExactAtMost;
         double cost = exact
             ? Cost(groups, blockLength, count => (UInt128)count, histogram)
             : Cost(groups, blockLength, count => (double)count, histogram);
         return new HuffmanExtension(cost / Math.Pow(total, blockLength) / blockLength, histogram);
     }
 
-    private static double Cost<TWeight>(CountGroups groups, int blockLength, Func<long, TWeight> weightOf, long[] histogram)
+    private static double Cost<TWeight>(CountGroups groups, int blockLength, Func<long, TWeight> weightOf, long[]? histogram)
         where TWeight : struct, INumber<TWeight>
     {
         TWeight[] bases = Array.ConvertAll(groups.Counts, count => weightOf(count));

@@ -4,7 +4,8 @@ namespace Tallybound.Coding.Codes;
 /// <param name="leaves">Runs of leaves; runs of packages are numbered after them, in the order of their steps.</param>
 internal sealed class MergeSteps(int leaves)
 {
-    private readonly List<(int First, int Second)> runs = new(leaves);
+    // Made once at the size that nearly all constructions need.
+    private readonly List<(int First, int Second)> runs = new((leaves * 2) + 16);
 
     // A step that pairs the items of one run makes many packages; all others make one.
     private readonly List<long> madeOfPairs = [];

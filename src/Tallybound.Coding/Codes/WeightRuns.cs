@@ -10,7 +10,7 @@ internal static class WeightRuns
     /// <summary>Builds the code.</summary>
     /// <param name="weights">Different weights, ascending, each above 0.</param>
     /// <param name="times">How many symbols have each, at least 1.</param>
-    /// <param name="histogram">Takes the number of symbols of each length; 256 entries, cleared.</param>
+    /// <param name="histogram">Takes the number of symbols of each length; 256 entries, cleared. Empty: lengths are not wanted, and the steps need no memory.</param>
     /// <param name="cost">Takes the weight of every package made; their sum is Σ weight × length.</param>
     public static void Build<TWeight, TCost>(ReadOnlySpan<TWeight> weights, ReadOnlySpan<long> times, Span<long> histogram, ref TCost cost)
         where TWeight : struct, INumber<TWeight>
@@ -19,20 +19,20 @@ internal static class WeightRuns
         if (weights.Length == 0) return;
         if (weights.Length == 1 && times[0] == 1)
         {
-            histogram[1] = 1;
+            if (!histogram.IsEmpty) histogram[1] = 1;
             cost.Add(weights[0], 1);
             return;
         }
-        var steps = new MergeSteps(weights.Length);
+        MergeSteps? steps = histogram.IsEmpty ? null : new MergeSteps(weights.Length);
         Merge(weights, times, steps, ref cost);
-        steps.CountDepths(histogram);
+        steps?.CountDepths(histogram);
     }
 
-    private static void Merge<TWeight, TCost>(ReadOnlySpan<TWeight> weights, ReadOnlySpan<long> times, MergeSteps steps, ref TCost cost)
+    private static void Merge<TWeight, TCost>(ReadOnlySpan<TWeight> weights, ReadOnlySpan<long> times, MergeSteps? steps, ref TCost cost)
         where TWeight : struct, INumber<TWeight>
         where TCost : struct, IPackageCost<TWeight>
     {
-        var packages = new Queue<(TWeight Weight, long Times)>();
+        var packages = new Queue<(TWeight Weight, long Times)>(weights.Length + 4);
         int leaf = 0, package = -1;
         long leafLeft = times[0], packageLeft = 0;
         TWeight packageWeight = default;
@@ -75,7 +75,7 @@ internal static class WeightRuns
         void Add(TWeight packed, long made, int one, int two, ref TCost to)
         {
             packages.Enqueue((packed, made));
-            steps.Add(one, two, made);
+            steps?.Add(one, two, made);
             to.Add(packed, made);
             if (packageLeft == 0) NextPackage();
         }

@@ -13,17 +13,23 @@ internal sealed class BlockPricing
     /// <summary>An extension of at most this many blocks is always priced; a larger one where the source has at least an eighth as many blocks.</summary>
     private const long ExtensionAlwaysAtMost = 1 << 15;
 
+    private const long CollectAboveSymbols = 16L << 20;
+
     private readonly long[] histogram = new long[256];
 
     /// <summary>Prices one block length; null where the source has no whole block.</summary>
     /// <param name="facts">The view.</param>
-    /// <param name="blocks">Its blocks in use.</param>
-    public (SymbolBlockProfile Profile, CodePrice Price)? Price(ViewFacts facts, BlockCounts blocks)
+    /// <param name="tally">Its counts.</param>
+    /// <param name="n">Symbols in a block.</param>
+    public (SymbolBlockProfile Profile, CodePrice Price)? Price(ViewFacts facts, ISymbolTally tally, int n)
     {
-        int n = blocks.Length;
         long whole = facts.Symbols / n;
         if (whole == 0) return null;
         long leftOverBits = facts.Symbols % n * facts.PlainBits;
+        // One after the other: each may take a hundred million bytes for a moment, and both together would pass the memory that was promised.
+        IndependentExtension? extension = Extension(facts, n, whole, leftOverBits);
+        CollectAfter(facts.Symbols);
+        BlockCounts blocks = tally.Blocks(n);
         long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;
         double entropyBits = Entropy.BitsPerSymbol(blocks.Counts);
         (long tableBits, TableFormat format) = Table(facts.AlphabetSize, n, blocks.Symbols, histogram);
@@ -39,10 +45,16 @@ internal sealed class BlockPricing
             Blocks = whole,
             BlocksInUse = blocks.Symbols.Length,
             BlockEntropyBitsPerSymbol = entropyBits / n,
-            Independent = Extension(facts, n, whole, leftOverBits),
+            Independent = extension,
             Observed = new ObservedBlocks(payload, tableBits, price.FramingBits!.Value, price.TotalBits!.Value),
         };
         return (profile, price);
+    }
+
+    /// <summary>Has large arrays collected at once, where a source was long enough to have made them.</summary>
+    private static void CollectAfter(long symbols)
+    {
+        if (symbols > CollectAboveSymbols) GC.Collect(GC.MaxGeneration, GCCollectionMode.Aggressive, blocking: true, compacting: true);
     }
 
     private static IndependentExtension? Extension(ViewFacts facts, int n, long whole, long leftOverBits)
@@ -50,6 +62,7 @@ internal sealed class BlockPricing
         double blocksOfExtension = Math.Pow(facts.SymbolsInUse, n);
         if (blocksOfExtension > ExtensionAlwaysAtMost && blocksOfExtension > 8.0 * whole) return null;
         HuffmanExtension extension = HuffmanExtension.Of(facts.Counts, n);
+        if (extension.LengthHistogram is null) return new IndependentExtension { ExpectedBitsPerSymbol = extension.ExpectedBitsPerSymbol };
         var inUse = new int[facts.SymbolsInUse];
         for (int symbol = 0, at = 0; symbol < facts.Counts.Length; symbol++)
             if (facts.Counts[symbol] > 0) inUse[at++] = symbol;

@@ -14,6 +14,9 @@ internal sealed class ViewFinisher(RunParameters parameters)
     /// <summary>Below this many bytes a source has too little of one fold to train on.</summary>
     private const long HeldOutFromBytes = 8192;
 
+    /// <summary>From here on block codes can be large, and the tables of contexts are given back before they are built.</summary>
+    private const long ReleaseAboveBytes = 16L << 20;
+
     private readonly Dictionary<(int Alphabet, int Order), ContextMeasures> measures = [];
     private readonly ContextHuffmanPrice contextPrice = new();
     private readonly CodeLadder ladder = new(parameters);
@@ -41,7 +44,7 @@ internal sealed class ViewFinisher(RunParameters parameters)
         var notMet = new List<LimitNotMet>();
         ladder.Price(facts, orders[0].EntropyBitsPerSymbol, prices, notMet);
         SymbolSeries? lengths = keepCounts ? Series(facts.AlphabetSize, symbol => ladder.HuffmanLengths[symbol]) : null;
-        if (sourceBytes > TallyChoice.DenseBytes / 4) tally.ReleaseContexts();
+        if (sourceBytes > ReleaseAboveBytes) tally.ReleaseContexts();
         List<SymbolBlockProfile> blocks = Blocks(tally, facts, prices);
         if (orders.Count > 1 && facts.AlphabetSize <= 256) prices.Add(ContextHuffman(facts, orders[1]));
         (double chiSquare, int degrees, double tail) = Uniformity.ChiSquare(facts.Counts);
@@ -118,7 +121,7 @@ internal sealed class ViewFinisher(RunParameters parameters)
         var blocks = new List<SymbolBlockProfile>();
         for (int length = 2; length <= tally.LongestBlock; length++)
         {
-            if (blockPricing.Price(facts, tally.Blocks(length)) is not { } priced) continue;
+            if (blockPricing.Price(facts, tally, length) is not { } priced) continue;
             blocks.Add(priced.Profile);
             prices.Add(priced.Price);
         }

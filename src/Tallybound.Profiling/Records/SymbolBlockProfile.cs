@@ -28,7 +28,7 @@ public sealed record IndependentExtension
     /// <summary>Expected code length ÷ n, in bit/symbol; an expected rate, not a payload.</summary>
     public required double ExpectedBitsPerSymbol { get; init; }
 
-    /// <summary>Bits of its table; absent where the table would hold more entries than the source has blocks and was not priced.</summary>
+    /// <summary>Bits of its table; absent where so many different weights occur that its lengths were not found (<see cref="Tallybound.Coding.Codes.HuffmanExtension"/>).</summary>
     public long? TableBits { get; init; }
 
     /// <summary>Expected payload, left-over symbols, table and framing, rounded to whole bytes; absent with <see cref="TableBits"/>.</summary>

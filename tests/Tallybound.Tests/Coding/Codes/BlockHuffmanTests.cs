@@ -61,7 +61,7 @@ public sealed class BlockHuffmanTests
                 HuffmanExtension extension = HuffmanExtension.Of(counts, n);
                 double entropy = Entropy.BitsPerSymbol(counts);
                 return extension.ExpectedBitsPerSymbol >= entropy - 1e-9 && extension.ExpectedBitsPerSymbol < entropy + (1.0 / n) + 1e-9
-                    && extension.LengthHistogram.Sum() == (long)Math.Pow(counts.Length, n);
+                    && extension.LengthHistogram!.Sum() == (long)Math.Pow(counts.Length, n);
             }, iter: 300, threads: 1);
         Assert.Equal(300, cases);
     }
@@ -79,7 +79,7 @@ public sealed class BlockHuffmanTests
                 var histogram = new long[256];
                 long payload = BlockHuffman.PayloadBits(products, histogram);
                 HuffmanExtension extension = HuffmanExtension.Of(counts, n);
-                return Math.Abs(extension.ExpectedBitsPerSymbol - (payload / Math.Pow(counts.Sum(), n) / n)) < 1e-12 && extension.LengthHistogram.AsSpan().SequenceEqual(histogram);
+                return Math.Abs(extension.ExpectedBitsPerSymbol - (payload / Math.Pow(counts.Sum(), n) / n)) < 1e-12 && extension.LengthHistogram!.AsSpan().SequenceEqual(histogram);
             }, iter: 300, threads: 1);
         Assert.Equal(300, cases);
     }

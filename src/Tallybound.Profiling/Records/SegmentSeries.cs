@@ -43,7 +43,7 @@ public sealed record TableBlockPrice
     /// <summary>95 % interval of <see cref="TotalBits"/> where it is an estimate from at least 16 windows.</summary>
     public long[]? TotalBitsInterval { get; init; }
 
-    /// <summary>The table format that made the whole cheapest.</summary>
+    /// <summary>The table format, one for all blocks, that made the whole cheapest; absent where no block carries a table.</summary>
     public string? TableFormat { get; init; }
 
     /// <summary>Blocks by kind, counted where the curve is exact.</summary>
@@ -54,6 +54,10 @@ public sealed record TableBlockPrice
 }
 
 /// <summary>How many table blocks took each kind.</summary>
+/// <param name="Stored">Symbols sent plain.</param>
+/// <param name="OneSymbol">One symbol throughout, sent once.</param>
+/// <param name="LastTable">Coded with the table sent last.</param>
+/// <param name="OwnTable">Coded with a table of their own.</param>
 public sealed record BlockKindCounts(long Stored, long OneSymbol, long LastTable, long OwnTable);
 
 /// <summary>The best division found (not proved best) of the source into stretches, each with a new table or the last one.</summary>
@@ -74,7 +78,7 @@ public sealed record AdaptiveSplitProfile
     /// <summary>Their sum.</summary>
     public required long TotalBits { get; init; }
 
-    /// <summary>The table format that made the whole cheapest.</summary>
+    /// <summary>The table format, one for all stretches, that made the whole cheapest; absent where no stretch carries a table.</summary>
     public string? TableFormat { get; init; }
 
     /// <summary>Bytes of a block of the cheapest exact fixed size.</summary>

@@ -54,6 +54,18 @@ public sealed class AdaptiveSplitTests
         Assert.True(split.TotalBits < split.BestFixedTotalBits);
     }
 
+    /// <summary>Each cut of a source without change wins back about (m − 1)/(2 ln 2) bits of H0's bias, 184 for bytes: less than any table of them.</summary>
+    [Theory]
+    [InlineData(false)]
+    [InlineData(true)]
+    public void A_source_without_change_is_not_divided(bool uniform)
+    {
+        var random = new Random(6);
+        byte[] symbols = [.. Enumerable.Range(0, 300 * 1024).Select(_ => (byte)(uniform ? random.Next(256) : Math.Min(255, (int)(-Math.Log(1 - random.NextDouble()) * 20))))];
+        SegmentCounts counts = BlockSizeCurveTests.Counted(new MixedSource(symbols, 256, 1024));
+        Assert.Equal([0], AdaptiveSplit.Find(counts, BlockSizeCurve.Exact(counts))!.Starts);
+    }
+
     [Fact]
     public void Segments_are_merged_until_256_are_left()
     {

@@ -8,10 +8,13 @@ namespace Tallybound.Coding.Codes.Tans;
 /// <remarks>The states from which symbol s leads to one certain cell are neighbours, so a step of the chain needs prefix sums and no sum over symbols: 2^R operations.
 /// The start is the weight 1/X, which a table with ideally spread cells keeps. Where a symbol costs a bit or more, plain steps settle quickly. Where it costs less, the state creeps up through the
 /// table and plain steps would follow it round and round; steps that use the weights just set (Gauss–Seidel) take such a round trip at once.
-/// Chains of nearly equal powers of two forget their state slowly under either kind; from the fortieth step on the kinds alternate, and after a thousand the rate stands as it is.</remarks>
+/// Chains of nearly equal powers of two, or of two round trips that seldom meet, forget their state slowly under either kind: from the sixteenth step on the kinds alternate and every
+/// eighth step is followed by a leap. After 2^21 cells (512 steps at R = 12) the rate stands as it is.</remarks>
 internal sealed class TansChain
 {
-    private const int MostSteps = 1000, MostStepsOfOneKind = 40;
+    private const int MostCells = 1 << 21, MostStepsOfOneKind = 16, StepsOfALeap = 8;
+
+    private const double LeastPlainRate = 0.7, LongestMemory = 0.9999, SameDirection = 0.999, LongestShrinking = 0.98;
 
     [ThreadStatic]
     private static TansChain? t_chain;
@@ -23,6 +26,8 @@ internal sealed class TansChain
     private double[] chances = [];
     private double[] sums = [];
     private double[] nextSums = [];
+    private double[] twoBefore = [];
+    private double[] fourBefore = [];
     private Slot[] slots = [];
 
     /// <summary>One chain a thread: its arrays serve one price after another.</summary>
@@ -32,21 +37,57 @@ internal sealed class TansChain
     /// <param name="counts">n(s), one in use at least.</param>
     /// <param name="frequencies">f(s), in all 2^R.</param>
     /// <param name="tableLog">R.</param>
-    /// <param name="settled">The chain is settled when two steps in a row move the rate by no more than this.</param>
+    /// <param name="settled">The chain is settled when two steps in a row move the rate, with all that would follow if the moves went on shrinking as they did, by no more than this.</param>
     public double SteadyRate(ReadOnlySpan<long> counts, ReadOnlySpan<int> frequencies, int tableLog, double settled)
     {
         Lay(counts, frequencies, tableLog);
-        double rate = Rate();
-        bool creeping = rate < 1;
-        for (int step = 0, calm = 0; step < MostSteps && calm < 2; step++)
+        double rate = Rate(), move = double.NaN;
+        bool creeping = rate < LeastPlainRate;
+        for (int step = 1, calm = 0; step <= MostCells / size && calm < 2; step++)
         {
-            double before = rate;
-            if (step < MostStepsOfOneKind ? creeping : (step & 1) == 0) StepInPlace();
+            if (creeping || (step > MostStepsOfOneKind && (step & 1) == 0)) StepInPlace();
             else Step();
+            double before = rate, moveBefore = move;
             rate = Rate();
-            calm = Math.Abs(rate - before) <= settled ? calm + 1 : 0;
+            move = Math.Abs(rate - before);
+            double shrinking = Math.Min(move / moveBefore, LongestShrinking);
+            calm = move == 0 || move * Math.Max(1, shrinking / (1 - shrinking)) <= settled ? calm + 1 : 0;
+            if (step < MostStepsOfOneKind || calm == 2) continue;
+            int phase = step % StepsOfALeap;
+            if (phase == 0 && step >= MostStepsOfOneKind + StepsOfALeap)
+            {
+                Leap();
+                (rate, move, calm) = (Rate(), double.NaN, 0);
+            }
+            else if (phase == StepsOfALeap - 4)
+            {
+                sums.AsSpan(0, size + 1).CopyTo(fourBefore);
+            }
+            else if (phase == StepsOfALeap - 2)
+            {
+                sums.AsSpan(0, size + 1).CopyTo(twoBefore);
+            }
         }
         return rate;
+    }
+
+    /// <summary>Goes where the last four steps lead if each pair of steps shrinks the move by the same factor (Aitken's δ² process, on the whole vector).</summary>
+    private void Leap()
+    {
+        Span<double> now = sums.AsSpan(0, size + 1);
+        ReadOnlySpan<double> middle = twoBefore.AsSpan(0, size + 1), first = fourBefore.AsSpan(0, size + 1);
+        double along = 0, square = 0, lastSquare = 0;
+        for (int cell = 0; cell < now.Length; cell++)
+        {
+            double move = middle[cell] - first[cell], lastMove = now[cell] - middle[cell];
+            along += lastMove * move;
+            square += move * move;
+            lastSquare += lastMove * lastMove;
+        }
+        double factor = along / square;
+        if (!(factor > 0 && factor < LongestMemory && along >= SameDirection * Math.Sqrt(square * lastSquare))) return;
+        double further = factor / (1 - factor);
+        for (int cell = 0; cell < now.Length; cell++) now[cell] += further * (now[cell] - middle[cell]);
     }
 
     /// <summary>Finds for every cell the states from which it is reached, and sets the starting weights.</summary>
@@ -56,7 +97,7 @@ internal sealed class TansChain
         if (origins.Length < size)
         {
             (symbolOfCell, origins, chances) = (new int[size], new uint[size], new double[size]);
-            (sums, nextSums) = (new double[size + 1], new double[size + 1]);
+            (sums, nextSums, twoBefore, fourBefore) = (new double[size + 1], new double[size + 1], new double[size + 1], new double[size + 1]);
         }
         if (slots.Length < counts.Length) slots = new Slot[counts.Length];
         TansSpread.Fill(frequencies, tableLog, symbolOfCell.AsSpan(0, size));

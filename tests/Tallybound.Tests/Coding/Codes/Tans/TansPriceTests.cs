@@ -26,16 +26,18 @@ public sealed class TansPriceTests
     public void The_steady_rate_is_that_of_the_chain_of_the_encoders_own_steps()
     {
         int compared = 0;
-        Gen.Select(Gen.Long[0, 2000].Array[2, 12], Gen.Int[5, 7], Gen.Int[1, 400]).Sample((counts, log, weight) =>
+        Gen.Select(Gen.Long[0, 2000].Array[2, 12], Gen.Int[5, 7], Gen.Int[1, 400]).Sample((drawn, log, weight) =>
         {
-            counts[0] = (counts[0] + 1) * weight;
-            counts[1]++;
+            long[] counts = [(drawn[0] + 1) * weight, drawn[1] + 1, .. drawn[2..]];
             int[] frequencies = new int[counts.Length];
             Assert.True(QuantizedFrequencies.TryFit(counts, log, frequencies));
-            Assert.Equal(Eliminated(counts, frequencies, log), TansPrice.BitsPerSymbol(counts, frequencies, log), 1e-9);
+            // A chain that falls apart, as powers of two alone may make it, has no one steady state.
+            double eliminated = Eliminated(counts, frequencies, log);
+            if (!double.IsFinite(eliminated)) return;
+            Assert.Equal(eliminated, TansPrice.BitsPerSymbol(counts, frequencies, log), 1e-9);
             Interlocked.Increment(ref compared);
         });
-        Assert.True(compared >= 100);
+        Assert.True(compared >= 80, $"{compared} are too few.");
     }
 
     /// <summary>The steady rate is N times what long runs spend: independent symbols, three tables, within five standard errors.</summary>
@@ -57,6 +59,14 @@ public sealed class TansPriceTests
         TansCoder.Encode(symbols, new TansTable(frequencies, log), ref counter);
         Assert.True(TansPrice.TryPrice(drawn, log, out long priced));
         Assert.Equal(priced, counter.Bits, 5 * Math.Sqrt(length));
+    }
+
+    /// <summary>By hand: powers of two give off log2(2^R/f) bits from every state.</summary>
+    [Fact]
+    public void Powers_of_two_cost_their_logarithm_whatever_the_source()
+    {
+        Assert.Equal(1, TansPrice.BitsPerSymbol([1029, 1207], [16, 16], 5), 1e-12);
+        Assert.Equal((100 * 1) + (30 * 2) + (7 * 3) + (3 * 3) + 6, TansPrice.PayloadBits([100, 30, 7, 3], [32, 16, 8, 8], 6));
     }
 
     [Fact]

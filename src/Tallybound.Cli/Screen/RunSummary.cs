@@ -70,12 +70,12 @@ internal static class RunSummary
     private static IEnumerable<string> Heaviest(IReadOnlyList<SourceSummary> sources)
     {
         yield return "";
-        yield return $"{"heaviest sources",-36}{"bytes",20}{"ratio",9}  best code";
+        yield return $"{"heaviest sources",-30}{"bytes",20}{"ratio",9}  best code";
         foreach (SourceSummary source in sources)
         {
             long bytes = source.Bytes ?? 0;
             string ratio = source.BestBytes is { } best ? SizeText.Ratio(bytes, best) : "";
-            yield return Cut($"{CutStart(DisplayText.Escape(source.Name), 35),-36}{SizeText.Count(bytes),20}{ratio,9}  {source.BestCode}".TrimEnd());
+            yield return Cut($"{CutStart(DisplayText.Escape(source.Name), 29),-30}{SizeText.Count(bytes),20}{ratio,9}  {source.BestCode}".TrimEnd());
         }
     }
 

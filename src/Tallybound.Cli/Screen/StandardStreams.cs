@@ -30,9 +30,9 @@ internal static class StandardStreams
                 stream.Write(Encoding.UTF8.GetBytes(text));
                 stream.Flush();
             }
-            catch (IOException)
+            catch (Exception e) when (e is IOException or UnauthorizedAccessException)
             {
-                // The pipe is closed: nobody reads on.
+                // The pipe is closed, or there never was one: nobody reads on.
             }
         }
     }

@@ -67,6 +67,9 @@ public sealed record FailedSource(string Name, string Reason);
 /// <param name="ExcludedByRule">Files kept out by the globs.</param>
 public sealed record WalkResult(IReadOnlyList<FoundSource> Sources, IReadOnlyList<SkippedSource> Skipped, IReadOnlyList<FailedSource> Failed, long ExcludedByRule);
 
+/// <summary>A glob of the request cannot be understood: a wrong command line. The message is one line that says how to mend it.</summary>
+public sealed class GlobException(string message, Exception? inner = null) : FormatException(message, inner);
+
 /// <summary>An INPUT that does not exist: a wrong command line, not a source that failed.</summary>
 public sealed class InputNotFoundException(string input) : IOException($"{DisplayText.Escape(input)}: there is no such file or folder; check the path, or quote it if it has spaces.")
 {

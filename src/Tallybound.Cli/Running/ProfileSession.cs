@@ -71,6 +71,10 @@ internal sealed class ProfileSession : IDisposable
         {
             throw new UsageException($"INPUT {e.Message.TrimEnd('.')}");
         }
+        catch (GlobException e)
+        {
+            throw new UsageException(e.Message);
+        }
     }
 
     private RunFolder MakeFolder()

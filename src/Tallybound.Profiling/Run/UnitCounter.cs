@@ -53,47 +53,39 @@ internal sealed class UnitCounter(RunParameters parameters, RunProgress progress
     /// <summary>A small file is read in one call; a pipe would cost more than the reading.</summary>
     private string? CountSmall(SourceReading reading, WorkUnit unit, Counting counting, CancellationToken stop)
     {
+        int filled = 0, length = (int)unit.Length!.Value;
+        string? trouble = null;
         try
         {
-            int filled = 0, length = (int)unit.Length!.Value;
             while (filled < length && reading.Read(smallBuffer.AsSpan(filled, length - filled), unit.Offset + filled, stop) is var read and > 0) filled += read;
-            counting.Append(smallBuffer.AsSpan(0, filled));
-            return null;
         }
         catch (SourceReadException exception)
         {
-            return exception.Message;
+            trouble = exception.Message;
         }
         catch (OperationCanceledException)
         {
-            return RunEnd.Stopped;
+            trouble = RunEnd.Stopped;
         }
+        counting.Append(smallBuffer.AsSpan(0, filled));
+        return trouble;
     }
 
     private static string? CountThroughPipe(SourceReading reading, WorkUnit unit, Counting counting, CancellationToken stop)
     {
         var pipe = new Pipe(SourceReader.PipeOptions);
-        Task filling = Task.Run(() => SourceReader.FillAsync(reading, unit.Offset, unit.Length, pipe.Writer, stop), CancellationToken.None);
-        string? trouble = null;
-        try
+        Task<SourceReadException?> filling = Task.Run(() => SourceReader.FillAsync(reading, unit.Offset, unit.Length, pipe.Writer, stop), CancellationToken.None);
+        while (true)
         {
-            while (true)
-            {
-                ValueTask<ReadResult> pending = pipe.Reader.ReadAsync(CancellationToken.None);
-                ReadResult result = pending.IsCompletedSuccessfully ? pending.Result : pending.AsTask().GetAwaiter().GetResult();
-                foreach (ReadOnlyMemory<byte> block in result.Buffer)
-                    for (int at = 0; at < block.Length; at += SliceBytes) counting.Append(block.Span.Slice(at, Math.Min(SliceBytes, block.Length - at)));
-                pipe.Reader.AdvanceTo(result.Buffer.End);
-                if (result.IsCompleted) break;
-            }
-        }
-        catch (IOException exception)
-        {
-            trouble = exception.Message;
+            ValueTask<ReadResult> pending = pipe.Reader.ReadAsync(CancellationToken.None);
+            ReadResult result = pending.IsCompletedSuccessfully ? pending.Result : pending.AsTask().GetAwaiter().GetResult();
+            foreach (ReadOnlyMemory<byte> block in result.Buffer)
+                for (int at = 0; at < block.Length; at += SliceBytes) counting.Append(block.Span.Slice(at, Math.Min(SliceBytes, block.Length - at)));
+            pipe.Reader.AdvanceTo(result.Buffer.End);
+            if (result.IsCompleted) break;
         }
         pipe.Reader.Complete();
-        filling.GetAwaiter().GetResult();
-        return trouble ?? (stop.IsCancellationRequested ? RunEnd.Stopped : null);
+        return filling.GetAwaiter().GetResult()?.Message ?? (stop.IsCancellationRequested ? RunEnd.Stopped : null);
     }
 
     /// <summary>One unit under way.</summary>

@@ -9,6 +9,7 @@ public sealed class PieceDigest : IDisposable
     /// <summary>Bytes of a piece.</summary>
     public const long PieceBytes = 64L << 20;
 
+    private static readonly byte[] OfNothing = SHA256.HashData([]);
     private readonly IncrementalHash hash = IncrementalHash.CreateHash(HashAlgorithmName.SHA256);
     private readonly List<byte[]> finished = [];
     private long inPiece;
@@ -27,19 +28,18 @@ public sealed class PieceDigest : IDisposable
         }
     }
 
-    /// <summary>The digests of the pieces so far, the last one perhaps shorter; one of no bytes where nothing came.</summary>
-    public IReadOnlyList<byte[]> Pieces()
-    {
-        if (inPiece > 0 || finished.Count == 0) Close();
-        return finished;
-    }
+    /// <summary>The digests of the pieces so far, the last one perhaps shorter; one of no bytes where nothing came. More may be appended afterwards.</summary>
+    public IReadOnlyList<byte[]> Pieces() => inPiece > 0 || finished.Count == 0 ? [.. finished, hash.GetCurrentHash()] : [.. finished];
 
-    /// <summary>The digest of a source from the digests of its pieces in order, and whether it is of several.</summary>
+    /// <summary>The digest of a source from the digests of its pieces, and whether it is of several.</summary>
+    /// <param name="pieces">In the order of the source. Pieces of no bytes do not count, such as units give that a shrunk file no longer reached.</param>
+    /// <returns>In lower-case hexadecimal; that of no bytes where no piece has any.</returns>
     public static (string Hexadecimal, bool OfPieces) Combine(IReadOnlyList<byte[]> pieces)
     {
-        if (pieces.Count == 1) return (Convert.ToHexStringLower(pieces[0]), false);
+        List<byte[]> filled = [.. pieces.Where(piece => !piece.AsSpan().SequenceEqual(OfNothing))];
+        if (filled.Count <= 1) return (Convert.ToHexStringLower(filled.Count == 0 ? OfNothing : filled[0]), false);
         using var hash = IncrementalHash.CreateHash(HashAlgorithmName.SHA256);
-        foreach (byte[] piece in pieces) hash.AppendData(piece);
+        foreach (byte[] piece in filled) hash.AppendData(piece);
         return (Convert.ToHexStringLower(hash.GetHashAndReset()), true);
     }
 

@@ -1,6 +1,7 @@
 using System.IO.Compression;
 using Tallybound.Sources.Reading;
 using ZstdSharp;
+using ZstdSharp.Unsafe;
 
 namespace Tallybound.Sources.Members;
 
@@ -9,6 +10,9 @@ internal sealed class MemberReading : SourceReading
 {
     /// <summary>The ratio is not looked at before this many bytes: a short file of one value may well be dense.</summary>
     private const long RatioSlackBytes = 1 << 20;
+
+    /// <summary>A decoder that meets damage gives nothing of the call it was in: short calls lose little.</summary>
+    private const int SliceBytes = 1 << 14;
 
     private readonly CountingStream compressed;
     private readonly Stream content;
@@ -38,21 +42,34 @@ internal sealed class MemberReading : SourceReading
         return new MemberReading(compressed, content, limits);
     }
 
+    /// <summary>Fills the buffer unless the member ends, so that whoever counts gets whole blocks.</summary>
     public override int Read(Span<byte> buffer, long offset, CancellationToken stop)
     {
-        stop.ThrowIfCancellationRequested();
+        int filled = 0;
+        while (filled < buffer.Length)
+        {
+            stop.ThrowIfCancellationRequested();
+            int read = ReadSlice(buffer[filled..]);
+            if (read == 0) break;
+            filled += read;
+        }
+        return filled;
+    }
+
+    private int ReadSlice(Span<byte> buffer)
+    {
         if (stopped is not null) return 0;
         long room = Room();
         if (room <= 0) return 0;
         try
         {
-            int read = content.Read(buffer[..(int)Math.Min(buffer.Length, room)]);
+            int read = content.Read(buffer[..(int)Math.Min(Math.Min(buffer.Length, SliceBytes), room)]);
             produced += read;
             return read;
         }
-        catch (Exception exception) when (exception is InvalidDataException or ZstdException or EndOfStreamException)
+        catch (Exception exception) when (IsDamage(exception))
         {
-            stopped = $"the compressed data is damaged after {Text(produced)} decompressed bytes";
+            stopped = ReasonOf(exception);
             return 0;
         }
     }
@@ -82,11 +99,24 @@ internal sealed class MemberReading : SourceReading
         {
             return content.ReadByte() >= 0;
         }
-        catch (Exception exception) when (exception is InvalidDataException or ZstdException or EndOfStreamException)
+        catch (Exception exception) when (IsDamage(exception))
         {
             return true;
         }
     }
+
+    private static bool IsDamage(Exception exception) => exception is InvalidDataException or ZstdException or EndOfStreamException;
+
+    private string ReasonOf(Exception exception) => exception is ZstdException zstandard
+        ? zstandard.Code switch
+        {
+            ZSTD_ErrorCode.ZSTD_error_frameParameter_windowTooLarge => $"it needs a window of more than 128 MiB to be decompressed; {Text(produced)} bytes came before",
+            ZSTD_ErrorCode.ZSTD_error_dictionary_wrong => $"it needs a dictionary to be decompressed; {Text(produced)} bytes came before",
+            _ => DamagedAfter(),
+        }
+        : DamagedAfter();
+
+    private string DamagedAfter() => $"the compressed data is damaged or cut short after {Text(produced)} decompressed bytes";
 
     private static string Text(long number) => number.ToString("N0", System.Globalization.CultureInfo.InvariantCulture);
 }

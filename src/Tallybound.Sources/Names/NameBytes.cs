@@ -1,6 +1,7 @@
 using System.Buffers;
 using System.Globalization;
 using System.Text;
+using System.Text.Unicode;
 
 namespace Tallybound.Sources.Names;
 
@@ -8,7 +9,10 @@ namespace Tallybound.Sources.Names;
 internal static class NameBytes
 {
     /// <summary>Text where the bytes are UTF-8; each byte that is not stands as <c>%HH</c>, and <c>%</c> as <c>%25</c>.</summary>
-    public static string ToName(ReadOnlySpan<byte> bytes)
+    public static string ToName(ReadOnlySpan<byte> bytes) =>
+        !bytes.Contains((byte)'%') && Utf8.IsValid(bytes) ? Encoding.UTF8.GetString(bytes) : Escaped(bytes);
+
+    private static string Escaped(ReadOnlySpan<byte> bytes)
     {
         var name = new StringBuilder(bytes.Length);
         Span<char> pair = stackalloc char[2];

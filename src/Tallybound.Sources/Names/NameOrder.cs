@@ -12,14 +12,10 @@ public sealed class NameOrder : IComparer<string>
     /// <summary>Below 0 where <paramref name="a"/> comes first.</summary>
     public static int Compare(string a, string b)
     {
-        int length = Math.Min(a.Length, b.Length);
-        for (int i = 0; i < length; i++)
-        {
-            if (a[i] == b[i]) continue;
-            // A surrogate stands for a character above all others of the basic plane.
-            bool high = char.IsSurrogate(a[i]), otherHigh = char.IsSurrogate(b[i]);
-            return high == otherHigh ? a[i] - b[i] : high ? 1 : -1;
-        }
-        return a.Length - b.Length;
+        int at = a.AsSpan().CommonPrefixLength(b);
+        if (at == a.Length || at == b.Length) return a.Length - b.Length;
+        // A surrogate stands for a character above all others of the basic plane.
+        bool high = char.IsSurrogate(a[at]), otherHigh = char.IsSurrogate(b[at]);
+        return high == otherHigh ? a[at] - b[at] : high ? 1 : -1;
     }
 }

@@ -14,4 +14,9 @@ internal enum FileType
 }
 
 /// <summary>What the system says of a path.</summary>
-internal readonly record struct FileFacts(FileType Type, long Bytes, DateTime ModifiedUtc, ulong Device, ulong Inode);
+/// <param name="Type">What it is.</param>
+/// <param name="Bytes">Its size.</param>
+/// <param name="ModifiedUtc">Time of its last change; null where the file system holds a time that no calendar here reaches.</param>
+/// <param name="Device">Device number.</param>
+/// <param name="Inode">Inode number; 0: unknown.</param>
+internal readonly record struct FileFacts(FileType Type, long Bytes, DateTime? ModifiedUtc, ulong Device, ulong Inode);

@@ -61,12 +61,28 @@ internal static unsafe class LinuxPaths
         }
         error = 0;
         facts = new FileFacts(TypeOf(buffer.Mode), (long)buffer.Size,
-            DateTime.UnixEpoch.AddSeconds(buffer.ModifiedSeconds).AddTicks(buffer.ModifiedNanoseconds / 100), ((ulong)buffer.DeviceMajor << 32) | buffer.DeviceMinor, buffer.Inode);
+            TimeOf(buffer.ModifiedSeconds, buffer.ModifiedNanoseconds), ((ulong)buffer.DeviceMajor << 32) | buffer.DeviceMinor, buffer.Inode);
         return true;
     }
 
     /// <summary>Looks at an open descriptor.</summary>
     public static bool TryLook(int descriptor, out FileFacts facts) => TryLook(descriptor, [], followLink: true, out facts, out _);
+
+    /// <summary>Looks at a path of any length, links followed.</summary>
+    public static bool TryLookAlong(ReadOnlySpan<byte> path, out FileFacts facts, out int error)
+    {
+        if (path.Length <= LongestDirect) return TryLook(LibC.CurrentFolder, path, followLink: true, out facts, out error);
+        facts = default;
+        int descriptor = Open(path, LibC.PathOnly, out error);
+        if (descriptor < 0) return false;
+        bool looked = TryLook(descriptor, [], followLink: true, out facts, out error);
+        _ = LibC.Close(descriptor);
+        return looked;
+    }
+
+    /// <summary>A file's time is whatever somebody set; file systems hold years that <see cref="DateTime"/> does not.</summary>
+    private static DateTime? TimeOf(long seconds, uint nanoseconds) =>
+        seconds is >= -62_135_596_800 and < 253_402_300_800 ? DateTime.UnixEpoch.AddSeconds(seconds).AddTicks(nanoseconds / 100) : null;
 
     private static FileType TypeOf(ushort mode) => (mode & 0xF000) switch
     {

@@ -10,7 +10,7 @@ internal sealed unsafe class FileReading : SourceReading
     private const int Sequential = 2;
     private const int Interrupted = 4;
     private readonly SafeFileHandle? handle;
-    private readonly int descriptor = -1;
+    private int descriptor = -1;
 
     private FileReading(int descriptor, long length)
     {
@@ -68,8 +68,10 @@ internal sealed unsafe class FileReading : SourceReading
 
     protected override void Dispose(bool disposing)
     {
-        if (handle is not null) handle.Dispose();
-        else _ = LibC.Close(descriptor);
+        handle?.Dispose();
+        // Closed once only: the number may be another file's by then.
+        int open = Interlocked.Exchange(ref descriptor, -1);
+        if (open >= 0) _ = LibC.Close(open);
     }
 
     private static FileReading OpenPortable(SourcePath path)

@@ -9,26 +9,30 @@ public static class SourceReader
     public const int BlockBytes = 1 << 20;
 
     private const int BlocksAhead = 4;
+    private const int LeastRoomBytes = 1 << 16;
 
     /// <summary>How a pipe for reading is made: blocks of 1 MiB, four of them ahead.</summary>
     public static PipeOptions PipeOptions { get; } = new(
         pauseWriterThreshold: BlocksAhead * (long)BlockBytes, resumeWriterThreshold: (BlocksAhead - 1) * (long)BlockBytes, minimumSegmentSize: BlockBytes, useSynchronizationContext: false);
 
-    /// <summary>Reads a stretch into a pipe and completes its writer, with the exception where reading failed: what was read before stands in the pipe.</summary>
+    /// <summary>Reads a stretch into a pipe and completes its writer; what was read before an error stands in the pipe.</summary>
+    /// <remarks>The writer is never completed with the error: a pipe's reader would throw it at once and lose the bytes that wait in front of it.</remarks>
     /// <param name="source">The opened source.</param>
     /// <param name="offset">First byte.</param>
     /// <param name="length">Bytes; null: to the end.</param>
     /// <param name="writer">Takes the bytes.</param>
-    /// <param name="stop">Ends reading; the writer is then completed without an exception.</param>
-    public static async Task FillAsync(SourceReading source, long offset, long? length, PipeWriter writer, CancellationToken stop)
+    /// <param name="stop">Ends reading; the stretch then ends where it is.</param>
+    /// <returns>Why reading failed; null where it did not.</returns>
+    public static async Task<SourceReadException?> FillAsync(SourceReading source, long offset, long? length, PipeWriter writer, CancellationToken stop)
     {
         long left = length ?? long.MaxValue;
-        Exception? trouble = null;
+        SourceReadException? trouble = null;
         try
         {
             while (left > 0)
             {
-                Memory<byte> block = writer.GetMemory(BlockBytes);
+                // A pipe gives a few KiB at a time: what is left of a block is filled before another is taken.
+                Memory<byte> block = writer.GetMemory(LeastRoomBytes);
                 int read = source.Read(block.Span[..(int)Math.Min(block.Length, left)], offset, stop);
                 if (read == 0) break;
                 writer.Advance(read);
@@ -44,8 +48,9 @@ public static class SourceReader
         }
         catch (Exception exception) when (exception is IOException or UnauthorizedAccessException)
         {
-            trouble = exception;
+            trouble = exception as SourceReadException ?? new SourceReadException(Native.ErrorWords.Of(exception), exception);
         }
-        await writer.CompleteAsync(trouble).ConfigureAwait(false);
+        await writer.CompleteAsync().ConfigureAwait(false);
+        return trouble;
     }
 }

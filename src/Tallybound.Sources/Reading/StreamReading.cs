@@ -10,13 +10,13 @@ internal sealed unsafe class StreamReading : SourceReading
     private const int TryAgain = 11;
     private const short Readable = 1;
     private const int LookForStopMilliseconds = 100;
-    private readonly int descriptor;
+    private int descriptor;
     private readonly bool owned;
     private readonly Stream? stream;
 
     private StreamReading(int descriptor, bool owned) => (this.descriptor, this.owned) = (descriptor, owned);
 
-    private StreamReading(Stream stream) => this.stream = stream;
+    private StreamReading(Stream stream) => (this.stream, descriptor) = (stream, -1);
 
     public override long? Length => null;
 
@@ -27,7 +27,7 @@ internal sealed unsafe class StreamReading : SourceReading
     {
         if (!OperatingSystem.IsLinux())
             return new StreamReading(path.IsStandardInput ? Console.OpenStandardInput() : new FileStream(path.ToString(), FileMode.Open, FileAccess.Read, FileShare.ReadWrite));
-        if (path.IsStandardInput) return new StreamReading(0, owned: false);
+        if (path.IsStandardInput) return StandardInput.IsClosed() ? throw new SourceReadException("standard input is closed") : new StreamReading(0, owned: false);
         // Not blocking: a pipe without a writer opens at once, and the wait for one can be ended.
         int descriptor = LinuxPaths.Open(path.RawBytes.Span, LibC.ReadOnly | LibC.NonBlocking, out int error);
         return descriptor >= 0 ? new StreamReading(descriptor, owned: true) : throw new SourceReadException(ErrorWords.Of(error));
@@ -44,6 +44,7 @@ internal sealed unsafe class StreamReading : SourceReading
             fixed (byte* start = buffer) read = LibC.Read(descriptor, start, buffer.Length);
             if (read >= 0) return (int)read;
             int error = Marshal.GetLastPInvokeError();
+            stop.ThrowIfCancellationRequested();
             if (error is not Interrupted and not TryAgain) throw new SourceReadException(ErrorWords.Of(error));
         }
     }
@@ -51,7 +52,9 @@ internal sealed unsafe class StreamReading : SourceReading
     protected override void Dispose(bool disposing)
     {
         stream?.Dispose();
-        if (owned) _ = LibC.Close(descriptor);
+        // Closed once only: the number may be another file's by then.
+        int open = Interlocked.Exchange(ref descriptor, -1);
+        if (owned && open >= 0) _ = LibC.Close(open);
     }
 
     private void WaitForBytes(CancellationToken stop)

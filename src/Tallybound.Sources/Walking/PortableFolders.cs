@@ -6,7 +6,7 @@ namespace Tallybound.Sources.Walking;
 /// <summary>Folders through the runtime's own calls, for systems other than Linux. Device and inode stay unknown there.</summary>
 internal sealed class PortableFolders : IFolderReader
 {
-    public bool TryLook(ReadOnlySpan<byte> path, bool followLink, out FileFacts facts, out bool missing, out string? trouble)
+    public bool TryLook(ReadOnlySpan<byte> path, out FileFacts facts, out bool missing, out string? trouble)
     {
         (facts, missing, trouble) = (default, false, null);
         try
@@ -15,8 +15,7 @@ internal sealed class PortableFolders : IFolderReader
             FileSystemInfo info = Directory.Exists(text) ? new DirectoryInfo(text) : new FileInfo(text);
             missing = !info.Exists;
             if (missing) return false;
-            if (followLink && info.ResolveLinkTarget(returnFinalTarget: true) is { } target) info = target;
-            facts = FactsOf(info, followLink);
+            facts = FactsOf(info, followLink: true);
             return true;
         }
         catch (Exception exception) when (exception is IOException or UnauthorizedAccessException)
@@ -26,30 +25,31 @@ internal sealed class PortableFolders : IFolderReader
         }
     }
 
-    public List<FolderEntry>? List(ReadOnlySpan<byte> path, bool followLinks, out string? trouble)
+    public string? List(ReadOnlySpan<byte> path, bool followLinks, List<FolderEntry> entries, CancellationToken stop)
     {
         try
         {
-            var entries = new List<FolderEntry>();
             var options = new EnumerationOptions { AttributesToSkip = FileAttributes.None, IgnoreInaccessible = false };
             foreach (FileSystemInfo info in new DirectoryInfo(Encoding.UTF8.GetString(path)).EnumerateFileSystemInfos("*", options))
+            {
+                stop.ThrowIfCancellationRequested();
                 entries.Add(new FolderEntry(Encoding.UTF8.GetBytes(info.Name), FactsOf(info, followLinks), null));
-            trouble = null;
-            return entries;
+            }
+            return null;
         }
         catch (Exception exception) when (exception is IOException or UnauthorizedAccessException)
         {
-            trouble = ErrorWords.Of(exception);
-            return null;
+            return ErrorWords.Of(exception);
         }
     }
 
     private static FileFacts FactsOf(FileSystemInfo info, bool followLink)
     {
-        FileType type = info.LinkTarget is not null && !followLink ? FileType.Link
-            : info.Attributes.HasFlag(FileAttributes.Directory) ? FileType.Folder
-            : info.Attributes.HasFlag(FileAttributes.Device) ? FileType.CharacterDevice
+        FileSystemInfo target = followLink && info.LinkTarget is not null && info.ResolveLinkTarget(returnFinalTarget: true) is { Exists: true } end ? end : info;
+        FileType type = target.LinkTarget is not null ? FileType.Link
+            : target.Attributes.HasFlag(FileAttributes.Directory) ? FileType.Folder
+            : target.Attributes.HasFlag(FileAttributes.Device) ? FileType.CharacterDevice
             : FileType.Regular;
-        return new FileFacts(type, info is FileInfo file ? file.Length : 0, info.LastWriteTimeUtc, 0, 0);
+        return new FileFacts(type, target is FileInfo file && type == FileType.Regular ? file.Length : 0, target.LastWriteTimeUtc, 0, 0);
     }
 }

@@ -1,8 +1,3 @@
-using System.Text;
-using Tallybound.Sources.Members;
-using Tallybound.Sources.Names;
-using Tallybound.Sources.Native;
-
 namespace Tallybound.Sources;
 
 /// <summary>Finds the sources behind the inputs of a command line.</summary>
@@ -12,6 +7,7 @@ public static class SourceWalk
     /// <param name="request">What to look for.</param>
     /// <param name="stop">Stops the walk.</param>
     /// <exception cref="InputNotFoundException">An INPUT does not exist.</exception>
+    /// <exception cref="GlobException">A glob cannot be understood.</exception>
     /// <exception cref="OperationCanceledException">The walk was stopped.</exception>
     public static WalkResult Find(SourceRequest request, CancellationToken stop = default) => new Walking.Walk(request, stop).Run();
 }

@@ -25,25 +25,16 @@ public sealed class ReadingTests : IDisposable
     private static async Task<(byte[] Bytes, Exception? Trouble)> ReadThroughPipe(SourceReading reading, long offset, long? length)
     {
         var pipe = new Pipe(SourceReader.PipeOptions);
-        Task filling = Task.Run(() => SourceReader.FillAsync(reading, offset, length, pipe.Writer, CancellationToken.None));
+        Task<SourceReadException?> filling = Task.Run(() => SourceReader.FillAsync(reading, offset, length, pipe.Writer, CancellationToken.None));
         using var all = new MemoryStream();
-        Exception? trouble = null;
-        try
+        while (true)
         {
-            while (true)
-            {
-                ReadResult result = await pipe.Reader.ReadAsync();
-                foreach (ReadOnlyMemory<byte> part in result.Buffer) all.Write(part.Span);
-                pipe.Reader.AdvanceTo(result.Buffer.End);
-                if (result.IsCompleted) break;
-            }
+            ReadResult result = await pipe.Reader.ReadAsync();
+            foreach (ReadOnlyMemory<byte> part in result.Buffer) all.Write(part.Span);
+            pipe.Reader.AdvanceTo(result.Buffer.End);
+            if (result.IsCompleted) break;
         }
-        catch (IOException exception)
-        {
-            trouble = exception;
-        }
-        await filling;
-        return (all.ToArray(), trouble);
+        return (all.ToArray(), await filling);
     }
 
     private static byte[] Seeded(int length)

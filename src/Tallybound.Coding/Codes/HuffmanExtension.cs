@@ -8,6 +8,8 @@ namespace Tallybound.Coding.Codes;
 /// take hundreds of megabytes to find for a table that no one sends.</param>
 public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[]? LengthHistogram)
 {
+    /// <summary>Sums of weights of so many bits fit a long.</summary>
+    private const int LongBits = 62;
     private const double ExactAtMost = 1 << 16;
     private const double LengthsAtMost = 1 << 18;
 
@@ -25,9 +27,9 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[]? Leng
         if (total == 0) throw new ArgumentException("No symbol is in use; an extension needs one.", nameof(counts));
         double combinations = Combinations(groups.Counts.Length, blockLength);
         long[]? histogram = combinations <= LengthsAtMost ? new long[256] : null;
-        bool exact = ((BitOperations.Log2((ulong)total) + 1) * blockLength) <= 128 && combinations <= ExactAtMost;
-        double cost = exact
-            ? Cost(groups, blockLength, count => (UInt128)count, histogram)
+        int bits = (BitOperations.Log2((ulong)total) + 1) * blockLength;
+        double cost = bits <= LongBits ? Cost(groups, blockLength, count => count, histogram)
+            : bits <= 128 && combinations <= ExactAtMost ? Cost(groups, blockLength, count => (UInt128)count, histogram)
             : Cost(groups, blockLength, count => (double)count, histogram);
         return new HuffmanExtension(cost / Math.Pow(total, blockLength) / blockLength, histogram);
     }

@@ -9,7 +9,7 @@ internal static class LengthRanks
     public static void HandOut(ReadOnlySpan<int> symbols, ReadOnlySpan<int> histogram, Span<byte> lengths)
     {
         int at = 0;
-        for (int length = histogram.Length - 1; length > 0; length--)
+        for (int length = histogram.LastIndexOfAnyExcept(0); length > 0; length--)
             for (int i = 0; i < histogram[length]; i++) lengths[symbols[at++]] = (byte)length;
     }
 }

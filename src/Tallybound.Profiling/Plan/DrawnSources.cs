@@ -9,20 +9,20 @@ internal sealed class DrawnSources
     /// <summary>Sources with pair counts at most.</summary>
     public const int WithPairs = 10;
 
-    private readonly long pageFrom;
-    private readonly long pairsFrom;
+    private readonly HashSet<int> page;
+    private readonly HashSet<int> pairs;
 
     public DrawnSources(RunPlan plan)
     {
-        List<long> sizes = [.. plan.Entries.Where(entry => entry.Found?.Bytes is not null).Select(entry => entry.Found!.Bytes!.Value)];
-        sizes.Sort((a, b) => b.CompareTo(a));
-        pageFrom = sizes.Count > WithPage ? sizes[WithPage - 1] : 0;
-        pairsFrom = sizes.Count > WithPairs ? sizes[WithPairs - 1] : 0;
+        List<int> heaviest = [.. Enumerable.Range(0, plan.Entries.Count).Where(id => plan.Entries[id].Found?.Bytes is not null)
+            .OrderByDescending(id => plan.Entries[id].Found!.Bytes).ThenBy(id => id).Take(WithPage)];
+        page = [.. heaviest];
+        pairs = [.. heaviest.Take(WithPairs)];
     }
 
     /// <summary>Whether a source may be among the heaviest; one of unknown size may.</summary>
-    public bool MayHavePage(PlanEntry entry) => entry.Found?.Bytes is not { } bytes || bytes >= pageFrom;
+    public bool MayHavePage(int id, PlanEntry entry) => entry.Found?.Bytes is null || page.Contains(id);
 
     /// <summary>Whether a source may be among the ten heaviest.</summary>
-    public bool MayHavePairs(PlanEntry entry) => entry.Found?.Bytes is not { } bytes || bytes >= pairsFrom;
+    public bool MayHavePairs(int id, PlanEntry entry) => entry.Found?.Bytes is null || pairs.Contains(id);
 }

@@ -31,7 +31,7 @@ internal sealed class Worker(int number, RunPlan plan, UnitQueue queue, TallyPoo
         {
             if (part is not null) keeper?.Keep(source.Id, part);
             (SourceProfile profile, DrawingCounts? drawing) = finisher.Finish(
-                source, part, shop.LeavesOut(source) ? TallyShop.LeftOutNote : null, drawn.MayHavePage(source.Entry), drawn.MayHavePairs(source.Entry));
+                source, part, shop.LeavesOut(source) ? TallyShop.LeftOutNote : null, drawn.MayHavePage(source.Id, source.Entry), drawn.MayHavePairs(source.Id, source.Entry));
             keep(source.Id, profile, drawing);
         }
         finally

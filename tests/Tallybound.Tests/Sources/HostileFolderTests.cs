@@ -35,7 +35,7 @@ public sealed class HostileFolderTests : IDisposable
     [Fact]
     public void A_thousand_levels_are_walked()
     {
-        folder.Shell("for i in $(seq 1000); do mkdir level-$i && cd level-$i || exit 1; done; printf deep > file");
+        folder.Write(string.Concat(Enumerable.Repeat("d/", 1000)) + "file", "deep"u8.ToArray());
         FoundSource source = Assert.Single(Find(folder.Root).Sources);
         Assert.Equal(1000, source.Name.Count(character => character == '/'));
         using SourceReading reading = SourceOpener.Open(source, MemberLimits.Default);
@@ -74,9 +74,10 @@ public sealed class HostileFolderTests : IDisposable
     public void Followed_links_give_what_they_lead_to_and_say_where_they_do_not()
     {
         folder.Write("real/file", [1]);
-        folder.Shell("ln -s real alias; ln -s nowhere broken; ln -s self self; ln -s ../.. real/up; ln -s real/file z");
+        folder.Shell("ln -s real alias; ln -s nowhere broken; ln -s self self; ln -s .. real/up; ln -s real/file z");
         WalkResult walk = SourceWalk.Find(new SourceRequest([folder.Root], [], [], FollowLinks: true), Stop);
-        Assert.Equal(["alias/file"], NamesOf(walk).Where(name => name.EndsWith("file", StringComparison.Ordinal)));
+        Assert.Equal(["alias/file"], NamesOf(walk));
+        Assert.Contains(new SkippedSource("alias/up", $"another name of the folder {Path.GetFileName(folder.Root)}"), walk.Skipped);
         Assert.Contains(new SkippedSource("real", "another name of the folder alias"), walk.Skipped);
         Assert.Contains(new SkippedSource("broken", "a symbolic link that leads nowhere"), walk.Skipped);
         Assert.Contains(new SkippedSource("self", "a symbolic link that leads nowhere"), walk.Skipped);

@@ -51,6 +51,14 @@ public sealed class ReadingEdgeTests : IDisposable
         Assert.InRange(reading.Read(new byte[4096], 0, Stop), 100, 4096);
     }
 
+    /// <summary>No page lies at address 0 of a process, and the kernel answers such a read with EIO (proc_pid_mem).</summary>
+    [Fact]
+    public void An_input_error_is_told_in_words()
+    {
+        using SourceReading reading = SourceOpener.Open(Find("/proc/self/mem"), MemberLimits.Default);
+        Assert.Equal("the device reported a read error", Assert.Throws<SourceReadException>(() => reading.Read(new byte[10], 0, Stop)).Message);
+    }
+
     [Fact]
     public void Several_threads_read_one_file_at_different_places()
     {

@@ -123,7 +123,7 @@ public sealed class SourceWalkTests : IDisposable
     public void A_tree_deeper_than_the_longest_path_is_walked_and_its_file_opens()
     {
         string name = new('d', 60);
-        Shell($"cd '{root}' && i=0; while [ $i -lt 200 ]; do mkdir {name} && cd {name} || exit 1; i=$((i+1)); done; printf deep > file");
+        Shell($"cd '{root}' && stretch=$(printf '{name}/%.0s' $(seq 50)) && for i in 1 2 3 4; do mkdir -p $stretch && cd -P $stretch || exit 1; done; printf deep > file");
         FoundSource source = Assert.Single(Find(root).Sources);
         Assert.True(source.Path.RawBytes.Length > 4096);
         using SourceReading reading = SourceOpener.Open(source, MemberLimits.Default);

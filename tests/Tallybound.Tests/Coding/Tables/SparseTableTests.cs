@@ -41,6 +41,29 @@ public sealed class SparseTableTests
         Assert.True(compared >= 100);
     }
 
+    /// <summary>Word alphabets, listed by all their symbols or by those in use: one price, the lower one, flat on a tie.</summary>
+    [Fact]
+    public void Large_alphabets_take_the_cheaper_of_flat_and_sparse()
+    {
+        int flat = 0, sparse = 0;
+        Gen.Select(Gen.Int[257, 2000], Gen.OneOf(Gen.Const(1), Gen.Int[2, 40]), Gen.Byte[1, 15].Array[2000], Gen.Int[1, 15]).Sample((alphabetSize, every, drawn, longest) =>
+        {
+            byte[] dense = new byte[alphabetSize];
+            for (int symbol = 0; symbol < alphabetSize; symbol += every) dense[symbol] = (byte)Math.Min(longest, (int)drawn[symbol]);
+            int[] symbols = [.. Enumerable.Range(0, alphabetSize).Where(symbol => dense[symbol] > 0)];
+            byte[] lengths = [.. symbols.Select(symbol => dense[symbol])];
+            (long bits, TableFormat format) = TablePricing.CheapestSparse(symbols, lengths, alphabetSize);
+            Assert.True(TablePricing.TryPrice(TableFormat.Flat, dense, out long flatBits));
+            Assert.True(TablePricing.TryPrice(TableFormat.Sparse, dense, out long sparseBits));
+            Assert.Equal(sparseBits, SparseTable.Bits(symbols, lengths));
+            Assert.Equal((Math.Min(flatBits, sparseBits), flatBits <= sparseBits ? TableFormat.Flat : TableFormat.Sparse), (bits, format));
+            Assert.Equal((bits, format), TablePricing.Cheapest(dense));
+            if (format == TableFormat.Flat) Interlocked.Increment(ref flat);
+            else Interlocked.Increment(ref sparse);
+        });
+        Assert.True(flat >= 5 && sparse >= 30, $"{flat} flat, {sparse} sparse.");
+    }
+
     [Fact]
     public void Lengths_of_another_number_of_blocks_are_refused()
     {

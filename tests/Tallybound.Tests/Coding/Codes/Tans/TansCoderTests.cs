@@ -26,19 +26,6 @@ public sealed class TansCoderTests
             return read.SequenceEqual(symbols) && counter.Bits == writer.Bits && reader.Position == writer.Bits;
         });
 
-    /// <summary>RFC 8878 appendix A, literal-length table: rows 0–3, 31 and the last, where symbols below 1 stand.</summary>
-    [Theory]
-    [InlineData(0, 0, 4, 0)]
-    [InlineData(1, 0, 4, 16)]
-    [InlineData(2, 1, 5, 32)]
-    [InlineData(3, 3, 5, 0)]
-    [InlineData(63, 32, 6, 0)]
-    public void The_predefined_table_is_that_of_the_standard(int cell, int symbol, int bits, int baseline)
-    {
-        var table = new TansTable([4, 3, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 2, 1, 1, 1, 2, 2, 2, 2, 2, 2, 2, 2, 2, 3, 2, 1, 1, 1, 1, 1, -1, -1, -1, -1], 6);
-        Assert.Equal((symbol, bits, baseline), (table.SymbolOf(cell), table.BitsOf(cell), table.BaselineOf(cell)));
-    }
-
     [Fact]
     public void A_symbol_without_a_cell_and_a_table_that_does_not_add_up_are_refused()
     {

@@ -8,6 +8,9 @@ internal static unsafe class LinuxPaths
     /// <summary>A longer path is opened folder by folder.</summary>
     private const int LongestDirect = 4000;
 
+    /// <summary>Whether this system is one whose calls these are.</summary>
+    public static bool Serve => OperatingSystem.IsLinux() && Environment.Is64BitProcess;
+
     /// <summary>Opens a path; answers a descriptor, or −1 and the error.</summary>
     public static int Open(ReadOnlySpan<byte> path, int flags, out int error)
     {
@@ -60,7 +63,7 @@ internal static unsafe class LinuxPaths
             }
         }
         error = 0;
-        facts = new FileFacts(TypeOf(buffer.Mode), (long)buffer.Size,
+        facts = new FileFacts(FileTypes.OfMode(buffer.Mode), (long)buffer.Size,
             TimeOf(buffer.ModifiedSeconds, buffer.ModifiedNanoseconds), ((ulong)buffer.DeviceMajor << 32) | buffer.DeviceMinor, buffer.Inode);
         return true;
     }
@@ -83,16 +86,4 @@ internal static unsafe class LinuxPaths
     /// <summary>A file's time is whatever somebody set; file systems hold years that <see cref="DateTime"/> does not.</summary>
     private static DateTime? TimeOf(long seconds, uint nanoseconds) =>
         seconds is >= -62_135_596_800 and < 253_402_300_800 ? DateTime.UnixEpoch.AddSeconds(seconds).AddTicks(nanoseconds / 100) : null;
-
-    private static FileType TypeOf(ushort mode) => (mode & 0xF000) switch
-    {
-        0x8000 => FileType.Regular,
-        0x4000 => FileType.Folder,
-        0xA000 => FileType.Link,
-        0x1000 => FileType.Pipe,
-        0xC000 => FileType.Socket,
-        0x2000 => FileType.CharacterDevice,
-        0x6000 => FileType.BlockDevice,
-        _ => FileType.Other,
-    };
 }

@@ -31,7 +31,7 @@ internal sealed unsafe class FileReading : SourceReading
     /// <exception cref="SourceReadException">It cannot be opened, or is no regular file any more.</exception>
     public static FileReading Open(SourcePath path)
     {
-        if (!OperatingSystem.IsLinux()) return OpenPortable(path);
+        if (!LinuxPaths.Serve) return OpenPortable(path);
         // Not blocking, so that a pipe that took the file's place cannot hold the run.
         int descriptor = LinuxPaths.Open(path.RawBytes.Span, LibC.ReadOnly | LibC.NonBlocking, out int error);
         if (descriptor < 0) throw new SourceReadException(ErrorWords.Of(error));

@@ -25,7 +25,7 @@ internal sealed unsafe class StreamReading : SourceReading
     /// <exception cref="SourceReadException">It cannot be opened.</exception>
     public static StreamReading Open(SourcePath path)
     {
-        if (!OperatingSystem.IsLinux())
+        if (!LinuxPaths.Serve)
             return new StreamReading(path.IsStandardInput ? Console.OpenStandardInput() : new FileStream(path.ToString(), FileMode.Open, FileAccess.Read, FileShare.ReadWrite));
         if (path.IsStandardInput) return StandardInput.IsClosed() ? throw new SourceReadException("standard input is closed") : new StreamReading(0, owned: false);
         // Not blocking: a pipe without a writer opens at once, and the wait for one can be ended.

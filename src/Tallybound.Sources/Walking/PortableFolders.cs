@@ -3,9 +3,12 @@ using Tallybound.Sources.Native;
 
 namespace Tallybound.Sources.Walking;
 
-/// <summary>Folders through the runtime's own calls, for systems other than Linux. Device and inode stay unknown there.</summary>
+/// <summary>Folders through the runtime's own calls, for systems other than Linux. </summary>
+/// <remarks>Where the system does not tell which file a path is (all but macOS), folders are told apart by their full paths, so that loops of links end.</remarks>
 internal sealed class PortableFolders : IFolderReader
 {
+    private readonly Dictionary<string, ulong> folderNumbers = new(StringComparer.Ordinal);
+
     public bool TryLook(ReadOnlySpan<byte> path, out FileFacts facts, out bool missing, out string? trouble)
     {
         (facts, missing, trouble) = (default, false, null);
@@ -43,13 +46,23 @@ internal sealed class PortableFolders : IFolderReader
         }
     }
 
-    private static FileFacts FactsOf(FileSystemInfo info, bool followLink)
+    private FileFacts FactsOf(FileSystemInfo info, bool followLink)
     {
         FileSystemInfo target = followLink && info.LinkTarget is not null && info.ResolveLinkTarget(returnFinalTarget: true) is { Exists: true } end ? end : info;
         FileType type = target.LinkTarget is not null ? FileType.Link
             : target.Attributes.HasFlag(FileAttributes.Directory) ? FileType.Folder
             : target.Attributes.HasFlag(FileAttributes.Device) ? FileType.CharacterDevice
             : FileType.Regular;
-        return new FileFacts(type, target is FileInfo file && type == FileType.Regular ? file.Length : 0, target.LastWriteTimeUtc, 0, 0);
+        ulong device = 0, inode = 0;
+        if (MacFacts.Serve && MacFacts.TryLook(target.FullName, out FileType told, out device, out inode)) type = told;
+        else if (type == FileType.Folder) inode = NumberOf(target);
+        return new FileFacts(type, target is FileInfo file && type == FileType.Regular ? file.Length : 0, target.LastWriteTimeUtc, device, inode);
+    }
+
+    private ulong NumberOf(FileSystemInfo folder)
+    {
+        string path = Path.TrimEndingDirectorySeparator(folder.FullName);
+        if (!folderNumbers.TryGetValue(path, out ulong number)) folderNumbers.Add(path, number = (ulong)folderNumbers.Count + 1);
+        return number;
     }
 }

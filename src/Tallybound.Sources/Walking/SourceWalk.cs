@@ -1,3 +1,6 @@
+using Tallybound.Sources.Native;
+using Tallybound.Sources.Walking;
+
 namespace Tallybound.Sources;
 
 /// <summary>Finds the sources behind the inputs of a command line.</summary>
@@ -9,5 +12,6 @@ public static class SourceWalk
     /// <exception cref="InputNotFoundException">An INPUT does not exist.</exception>
     /// <exception cref="GlobException">A glob cannot be understood.</exception>
     /// <exception cref="OperationCanceledException">The walk was stopped.</exception>
-    public static WalkResult Find(SourceRequest request, CancellationToken stop = default) => new Walking.Walk(request, stop).Run();
+    public static WalkResult Find(SourceRequest request, CancellationToken stop = default) =>
+        new Walk(request, LinuxPaths.Serve ? new LinuxFolders() : new PortableFolders(), stop).Run();
 }

@@ -5,9 +5,11 @@ using Tallybound.Sources.Native;
 namespace Tallybound.Sources.Walking;
 
 /// <summary>One walk over all inputs.</summary>
-internal sealed class Walk(SourceRequest request, CancellationToken stop)
+/// <param name="request">What to look for.</param>
+/// <param name="folders">How this system lists folders.</param>
+/// <param name="stop">Ends the walk.</param>
+internal sealed class Walk(SourceRequest request, IFolderReader folders, CancellationToken stop)
 {
-    private readonly IFolderReader folders = OperatingSystem.IsLinux() && Environment.Is64BitProcess ? new LinuxFolders() : new PortableFolders();
     private readonly FileRules rules = new(request.Include, request.Exclude);
     private readonly WalkFindings findings = new();
     private readonly List<FolderEntry> entries = [];

@@ -96,7 +96,7 @@ internal sealed class CorpusBuilder
         var ordered = new OrderedDictionary<string, long>(StringComparer.Ordinal) { ["raw"] = bytes };
         if (storedBytes > 0)
         {
-            foreach ((string key, CodeTotal total) in totals.OrderBy(entry => entry.Key, StringComparer.Ordinal))
+            foreach ((string key, CodeTotal total) in totals.OrderBy(entry => CodeOrder.RankOf(entry.Key)))
                 ordered[key] = total.Taken + (storedBytes - total.StoredOfThese);
         }
         ordered["bestPerSource"] = bestBytes;

@@ -27,9 +27,9 @@ internal static class VerdictRule
     {
         string whole = $"{SizeText.Bytes(raw)} in {SizeText.Count(sources)} {(sources == 1 ? "source" : "sources")}";
         if (best == "raw") return $"{whole}: none of the codes priced here makes it smaller once tables and framing are charged; it is best stored.";
-        string sentence = $"{whole}: coded with {CodeText.Of(best)} it is {SizeText.Bytes(coded)}, tables and framing included, {SizeText.Ratio(raw, coded)} (saving {SizeText.Saving(raw, coded)})";
+        string sentence = $"{whole}; with {CodeText.Of(best)}, it is {SizeText.Bytes(coded)}, tables and framing included: {SizeText.Ratio(raw, coded)}, saving {SizeText.Saving(raw, coded)}.";
         return bestPerSource < coded && sources > 1
-            ? $"{sentence}; with the best code of each source, {SizeText.Bytes(bestPerSource)}, {SizeText.Ratio(raw, bestPerSource)}."
-            : sentence + ".";
+            ? $"{sentence} With the best code of each source it is {SizeText.Bytes(bestPerSource)}, {SizeText.Ratio(raw, bestPerSource)}."
+            : sentence;
     }
 }

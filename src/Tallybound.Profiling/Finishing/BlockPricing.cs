@@ -33,6 +33,7 @@ internal sealed class BlockPricing
         long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;
         double entropyBits = Entropy.BitsPerSymbol(blocks.Counts);
         (long tableBits, TableFormat format) = Table(facts.AlphabetSize, n, blocks.Symbols, histogram);
+        int inUse = blocks.Symbols.Length;
         double bound = ((whole * entropyBits) + leftOverBits) / facts.Symbols;
         CodePrice price = new PriceMaker(facts, bound, "block").Make("block-huffman", payload, tableBits, format.Name()) with
         {
@@ -43,11 +44,12 @@ internal sealed class BlockPricing
         {
             BlockLength = n,
             Blocks = whole,
-            BlocksInUse = blocks.Symbols.Length,
+            BlocksInUse = inUse,
             BlockEntropyBitsPerSymbol = entropyBits / n,
             Independent = extension,
             Observed = new ObservedBlocks(payload, tableBits, price.FramingBits!.Value, price.TotalBits!.Value),
         };
+        CollectAfter(facts.Symbols);
         return (profile, price);
     }
 

@@ -3,6 +3,7 @@ using Tallybound.Profiling.Corpus;
 using Tallybound.Profiling.Ledger;
 using Tallybound.Profiling.Plan;
 using Tallybound.Profiling.Records;
+using Tallybound.Sources;
 using Tallybound.Tallies;
 
 namespace Tallybound.Profiling.Run;
@@ -100,7 +101,7 @@ public static class ProfileRun
         RunParameters parameters = plan.Parameters;
         return new RunParametersRecord
         {
-            Inputs = parameters.Inputs,
+            Inputs = RawArguments.NamesOf(parameters.Inputs),
             Include = parameters.Include,
             Exclude = parameters.Exclude,
             Order = parameters.HighestOrder,

@@ -20,6 +20,10 @@ public static class RawArguments
         return Recover(arguments, File.ReadAllBytes("/proc/self/cmdline"));
     }
 
+    /// <summary>Arguments as source names write them: bytes that are not UTF-8 as <c>%HH</c>, <c>%</c> as <c>%25</c>.</summary>
+    /// <param name="arguments">The arguments as text, in the order of the command line.</param>
+    public static IReadOnlyList<string> NamesOf(IReadOnlyList<string> arguments) => [.. BytesOf(arguments).Select(bytes => Names.NameBytes.ToName(bytes))];
+
     /// <summary>As <see cref="BytesOf"/>, from a command line whose arguments end with a zero byte each.</summary>
     internal static List<byte[]> Recover(IReadOnlyList<string> arguments, ReadOnlySpan<byte> commandLine)
     {

@@ -26,12 +26,12 @@ internal sealed class MergeSteps(int leaves)
     {
         var depths = new byte[runs.Count];
         var times = new long[runs.Count];
-        var more = new Dictionary<int, List<(byte Depth, long Times)>>();
+        Dictionary<int, List<(byte Depth, long Times)>>? more = null;
         (depths[^1], times[^1]) = (0, 1);
         for (int step = runs.Count - 1; step >= 0; step--)
         {
             Share(step, depths[step], times[step], histogram);
-            if (!more.Remove(step, out List<(byte Depth, long Times)>? others)) continue;
+            if (more is null || !more.Remove(step, out List<(byte Depth, long Times)>? others)) continue;
             foreach ((byte depth, long count) in others) Share(step, depth, count, histogram);
         }
 
@@ -56,12 +56,13 @@ internal sealed class MergeSteps(int leaves)
                 return;
             }
             int package = run - leaves;
-            if (times[package] == 0 || (depths[package] == depth && !more.ContainsKey(package)))
+            if (times[package] == 0 || (depths[package] == depth && more?.ContainsKey(package) != true))
             {
                 depths[package] = depth;
                 times[package] += count;
                 return;
             }
+            more ??= [];
             if (!more.TryGetValue(package, out List<(byte Depth, long Times)>? others)) more.Add(package, others = []);
             if (others.Count > 0 && others[^1].Depth == depth) others[^1] = (depth, others[^1].Times + count);
             else others.Add((depth, count));

@@ -198,6 +198,8 @@ public sealed class RunLedger : IDisposable
 
     private void WritePlan(IEnumerable<KeyValuePair<string, string>> planFacts, IEnumerable<PlannedSource> sources)
     {
+        // A record is some kilobytes: pages that hold it whole are read and written in one piece.
+        Execute("PRAGMA page_size = 16384");
         Execute("PRAGMA journal_mode = WAL");
         Execute("PRAGMA synchronous = NORMAL");
         Execute("PRAGMA cache_size = -8192");

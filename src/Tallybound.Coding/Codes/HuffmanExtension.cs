@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.InteropServices;
 
 namespace Tallybound.Coding.Codes;
 
@@ -8,6 +9,8 @@ namespace Tallybound.Coding.Codes;
 /// take hundreds of megabytes to find for a table that no one sends.</param>
 public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[]? LengthHistogram)
 {
+    private const int SortedAsNumbersFrom = 256;
+
     /// <summary>Sums of weights of so many bits fit a long.</summary>
     private const int LongBits = 62;
     private const double ExactAtMost = 1 << 16;
@@ -43,7 +46,7 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[]? Leng
         var many = new long[combinations];
         int listed = 0;
         List(bases, groups.Times, blockLength, 0, TWeight.One, 1, sorted, many, ref listed);
-        Array.Sort(sorted, many);
+        Sort(sorted, many);
         int used = Unite(sorted, many);
         ApproximateCost<TWeight> cost = default;
         WeightRuns.Build<TWeight, ApproximateCost<TWeight>>(sorted.AsSpan(0, used), many.AsSpan(0, used), histogram, ref cost);
@@ -71,6 +74,15 @@ public sealed record HuffmanExtension(double ExpectedBitsPerSymbol, long[]? Leng
             List(bases, sizes, left - take, from + 1, weight, blocks * Binomial(left, take), weights, times, ref listed);
             (weight, blocks) = (weight * bases[from], blocks * sizes[from]);
         }
+    }
+
+    /// <summary>Sorts by weight. The bits of a positive floating-point number rise with it, so both it and a long are sorted as whole numbers.</summary>
+    private static void Sort<TWeight>(TWeight[] weights, long[] times)
+        where TWeight : struct, INumber<TWeight>
+    {
+        if (weights.Length > SortedAsNumbersFrom && (typeof(TWeight) == typeof(double) || typeof(TWeight) == typeof(long)))
+            RadixSort.ByWeight(times.AsSpan(), MemoryMarshal.Cast<TWeight, long>(weights.AsSpan()));
+        else Array.Sort(weights, times);
     }
 
     private static int Unite<TWeight>(TWeight[] weights, long[] times)

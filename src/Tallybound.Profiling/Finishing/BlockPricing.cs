@@ -13,7 +13,7 @@ internal sealed class BlockPricing
     /// <summary>An extension of at most this many blocks is always priced; a larger one where the source has at least an eighth as many blocks.</summary>
     private const long ExtensionAlwaysAtMost = 1 << 15;
 
-    private const long CollectAboveSymbols = 16L << 20;
+    private const int CollectAboveItems = 1 << 20;
 
     private readonly long[] histogram = new long[256];
 
@@ -28,7 +28,6 @@ internal sealed class BlockPricing
         long leftOverBits = facts.Symbols % n * facts.PlainBits;
         // One after the other: each may take a hundred million bytes for a moment, and both together would pass the memory that was promised.
         IndependentExtension? extension = Extension(facts, n, whole, leftOverBits);
-        CollectAfter(facts.Symbols);
         BlockCounts blocks = tally.Blocks(n);
         long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;
         double entropyBits = Entropy.BitsPerSymbol(blocks.Counts);
@@ -49,21 +48,20 @@ internal sealed class BlockPricing
             Independent = extension,
             Observed = new ObservedBlocks(payload, tableBits, price.FramingBits!.Value, price.TotalBits!.Value),
         };
-        CollectAfter(facts.Symbols);
+        if (inUse > CollectAboveItems) Collect();
         return (profile, price);
     }
 
-    /// <summary>Has large arrays collected at once, where a source was long enough to have made them.</summary>
-    private static void CollectAfter(long symbols)
-    {
-        if (symbols > CollectAboveSymbols) GC.Collect(GC.MaxGeneration, GCCollectionMode.Aggressive, blocking: true, compacting: true);
-    }
+    /// <summary>Gives the memory of large arrays back at once, where some were made: the next ones may be as large.</summary>
+    private static void Collect() => GC.Collect(GC.MaxGeneration, GCCollectionMode.Aggressive, blocking: true, compacting: true);
 
     private static IndependentExtension? Extension(ViewFacts facts, int n, long whole, long leftOverBits)
     {
         double blocksOfExtension = Math.Pow(facts.SymbolsInUse, n);
         if (blocksOfExtension > ExtensionAlwaysAtMost && blocksOfExtension > 8.0 * whole) return null;
         HuffmanExtension extension = HuffmanExtension.Of(facts.Counts, n);
+        // Without lengths there were very many combinations, and their arrays are large.
+        if (extension.LengthHistogram is null) Collect();
         if (extension.LengthHistogram is null) return new IndependentExtension { ExpectedBitsPerSymbol = extension.ExpectedBitsPerSymbol };
         var inUse = new int[facts.SymbolsInUse];
         for (int symbol = 0, at = 0; symbol < facts.Counts.Length; symbol++)

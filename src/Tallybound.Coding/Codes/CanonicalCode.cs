@@ -67,7 +67,7 @@ public sealed class CanonicalCode
 
     /// <summary>Reads as many symbols as there is room for.</summary>
     /// <exception cref="InvalidDataException">The bits end early, or are no word of this code.</exception>
-    public void Decode(ref BitReader reader, Span<int> symbols)
+    public void Decode(ref BitReader reader, scoped Span<int> symbols)
     {
         foreach (ref int symbol in symbols) symbol = DecodeOne(ref reader);
     }

@@ -1,5 +1,4 @@
 using System.Runtime.CompilerServices;
-using System.Runtime.InteropServices;
 
 namespace Tallybound.Tallies;
 
@@ -25,39 +24,47 @@ public static class ByteHistogram
     /// <summary>Eight tables, so that neighbours of one value do not wait on each other's store; runs of one value are stepped over.</summary>
     /// <remarks>A lane is 32 bits wide and cannot overflow: a span is shorter than 2^31.</remarks>
     [SkipLocalsInit]
-    internal static void AddInLanes(ReadOnlySpan<byte> source, Span<long> counts)
+    internal static unsafe void AddInLanes(ReadOnlySpan<byte> source, Span<long> counts)
     {
-        Span<uint> lanes = stackalloc uint[Lanes * 256];
-        lanes.Clear();
-        ref uint table = ref MemoryMarshal.GetReference(lanes);
-        ref byte at = ref MemoryMarshal.GetReference(source);
-        int position = 0, end = source.Length - 64;
-        while (position <= end)
+        uint* lanes = stackalloc uint[Lanes * 256];
+        new Span<uint>(lanes, Lanes * 256).Clear();
+        fixed (byte* start = source)
         {
-            ref byte from = ref Unsafe.Add(ref at, position);
-            ulong first = Unsafe.ReadUnaligned<ulong>(ref from);
-            if (first == ulong.RotateLeft(first, 8) && from == Unsafe.Add(ref from, 63))
+            byte* at = start, end = start + source.Length, last = end - 64;
+            while (at <= last)
             {
-                int run = source[position..].IndexOfAnyExcept(from);
-                run = run < 0 ? source.Length - position : run;
-                counts[from] += run;
-                position += run;
-                continue;
+                ulong first = Unsafe.ReadUnaligned<ulong>(at);
+                if (first == ulong.RotateLeft(first, 8) && *at == at[63])
+                {
+                    int run = new ReadOnlySpan<byte>(at, (int)(end - at)).IndexOfAnyExcept(*at);
+                    run = run < 0 ? (int)(end - at) : run;
+                    counts[*at] += run;
+                    at += run;
+                    continue;
+                }
+                byte* stop = at + 64;
+                for (; at < stop; at += 16)
+                {
+                    lanes[at[0]]++;
+                    (lanes + 256)[at[1]]++;
+                    (lanes + 512)[at[2]]++;
+                    (lanes + 768)[at[3]]++;
+                    (lanes + 1024)[at[4]]++;
+                    (lanes + 1280)[at[5]]++;
+                    (lanes + 1536)[at[6]]++;
+                    (lanes + 1792)[at[7]]++;
+                    lanes[at[8]]++;
+                    (lanes + 256)[at[9]]++;
+                    (lanes + 512)[at[10]]++;
+                    (lanes + 768)[at[11]]++;
+                    (lanes + 1024)[at[12]]++;
+                    (lanes + 1280)[at[13]]++;
+                    (lanes + 1536)[at[14]]++;
+                    (lanes + 1792)[at[15]]++;
+                }
             }
-            for (int i = 0; i < 64; i += Lanes)
-            {
-                Unsafe.Add(ref table, Unsafe.Add(ref from, i))++;
-                Unsafe.Add(ref table, 256 + Unsafe.Add(ref from, i + 1))++;
-                Unsafe.Add(ref table, 512 + Unsafe.Add(ref from, i + 2))++;
-                Unsafe.Add(ref table, 768 + Unsafe.Add(ref from, i + 3))++;
-                Unsafe.Add(ref table, 1024 + Unsafe.Add(ref from, i + 4))++;
-                Unsafe.Add(ref table, 1280 + Unsafe.Add(ref from, i + 5))++;
-                Unsafe.Add(ref table, 1536 + Unsafe.Add(ref from, i + 6))++;
-                Unsafe.Add(ref table, 1792 + Unsafe.Add(ref from, i + 7))++;
-            }
-            position += 64;
+            AddScalar(new ReadOnlySpan<byte>(at, (int)(end - at)), counts);
         }
-        AddScalar(source[position..], counts);
         for (int symbol = 0; symbol < 256; symbol++)
         {
             long sum = 0;

@@ -17,6 +17,9 @@ internal static class Machine
 
     public static string NumpyVersion() => "numpy " + FirstLine("/usr/bin/python3", "-c", "import numpy; print(numpy.__version__)");
 
+    /// <summary>Processes that wanted a processor in the last minute.</summary>
+    public static double Load() => File.Exists("/proc/loadavg") ? double.Parse(File.ReadAllText("/proc/loadavg").Split(' ')[0], System.Globalization.CultureInfo.InvariantCulture) : 0;
+
     public static string Commit() => FirstLine("git", "rev-parse", "--short", "HEAD");
 
     private static string FirstLine(string program, params string[] arguments)

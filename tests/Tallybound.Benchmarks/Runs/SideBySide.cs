@@ -1,10 +1,11 @@
 using System.Globalization;
 using System.Runtime.InteropServices;
 using System.Text;
+using Tallybound.Benchmarks.Kernels;
 
 namespace Tallybound.Benchmarks.Runs;
 
-/// <summary>Runs every comparison of whole processes, one after the other in one sitting, and writes what came out to <c>Results/&lt;cpu&gt;/</c>.</summary>
+/// <summary>Runs every comparison of whole processes, one after the other in one sitting, and writes what came out to <c>Results/&lt;cpu&gt;/</c>. Options: --kernels, --whole (both without either), --mib N, --repeat N.</summary>
 /// <remarks>The two sides of a row alternate, so that a machine that slows down slows both. Rows that miss their ratio stay in the table.</remarks>
 internal static class SideBySide
 {
@@ -16,19 +17,16 @@ internal static class SideBySide
         string work = Directory.CreateTempSubdirectory("tallybound-bench-").FullName;
         try
         {
-            string program = Publication.Publish(root);
             var inputs = new BenchmarkInputs(work, (long)megabytes << 20);
-            var rows = new List<ResultRow>();
-            await Console.Out.WriteLineAsync($"inputs of {megabytes} MiB, {repetitions} repetitions a side, program published to {Path.GetFileName(program)}").ConfigureAwait(false);
-            foreach (Comparison comparison in Comparisons.All(root, program, work, inputs, repetitions))
+            bool kernels = Array.IndexOf(arguments, "--kernels") >= 0, whole = Array.IndexOf(arguments, "--whole") >= 0;
+            string options = string.Create(CultureInfo.InvariantCulture, $"--mib {megabytes} --repeat {repetitions}");
+            if (kernels || !whole)
             {
-                ResultRow row = comparison.Run();
-                rows.Add(row);
-                await Console.Out.WriteLineAsync(row.ToMarkdown()).ConfigureAwait(false);
+                using var native = new NativeCounting(Path.Combine(root, "tests", "Tallybound.Benchmarks", "Native", "counting.c"), work);
+                await MeasureAsync(root, "Kernels", "kernels.md", "--kernels " + options, new KernelComparisons(native, inputs, repetitions).All()).ConfigureAwait(false);
             }
-            string results = Path.Combine(root, "tests", "Tallybound.Benchmarks", "Results", Machine.FolderName());
-            Directory.CreateDirectory(results);
-            await File.WriteAllTextAsync(Path.Combine(results, "whole-runs.md"), Document(megabytes, repetitions, rows)).ConfigureAwait(false);
+            if (whole || !kernels)
+                await MeasureAsync(root, "Whole runs", "whole-runs.md", "--whole " + options, Comparisons.All(root, Publication.Publish(root), work, inputs, repetitions)).ConfigureAwait(false);
             return 0;
         }
         finally
@@ -37,13 +35,28 @@ internal static class SideBySide
         }
     }
 
-    private static string Document(int megabytes, int repetitions, List<ResultRow> rows)
+    private static async Task MeasureAsync(string root, string title, string file, string options, IEnumerable<Comparison> comparisons)
+    {
+        var rows = new List<ResultRow>();
+        double load = Machine.Load();
+        foreach (Comparison comparison in comparisons)
+        {
+            ResultRow row = comparison.Run();
+            rows.Add(row);
+            await Console.Out.WriteLineAsync(row.ToMarkdown()).ConfigureAwait(false);
+        }
+        string results = Path.Combine(root, "tests", "Tallybound.Benchmarks", "Results", Machine.FolderName());
+        Directory.CreateDirectory(results);
+        await File.WriteAllTextAsync(Path.Combine(results, file), Document(title, options, load, rows)).ConfigureAwait(false);
+    }
+
+    private static string Document(string title, string options, double load, List<ResultRow> rows)
     {
         var text = new StringBuilder();
-        text.AppendLine("# Whole runs").AppendLine();
-        text.AppendLine(CultureInfo.InvariantCulture, $"Made by `dotnet run --project tests/Tallybound.Benchmarks -c Release -- --mib {megabytes} --repeat {repetitions}`.");
-        text.AppendLine(CultureInfo.InvariantCulture, $"Machine: {Machine.Processor()}, {Environment.ProcessorCount} processors; {RuntimeInformation.FrameworkDescription}; {Machine.GccVersion()}; {Machine.NumpyVersion()}; commit {Machine.Commit()}.");
-        text.AppendLine("Seconds are medians of wall time; the two sides of a row alternate. Ratios carry over to other machines, seconds do not.").AppendLine();
+        text.AppendLine(CultureInfo.InvariantCulture, $"# {title}").AppendLine();
+        text.AppendLine(CultureInfo.InvariantCulture, $"Made by `dotnet run --project tests/Tallybound.Benchmarks -c Release -- {options}`.");
+        text.AppendLine(CultureInfo.InvariantCulture, $"Machine: {Machine.Processor()}, {Environment.ProcessorCount} processors, load {load:0.0} at the start; {RuntimeInformation.FrameworkDescription}; {Machine.GccVersion()}; {Machine.NumpyVersion()}; commit {Machine.Commit()}.");
+        text.AppendLine("Figures are medians; the two sides of a row alternate. Ratios carry over to other machines, figures do not.").AppendLine();
         text.AppendLine(ResultRow.Header);
         foreach (ResultRow row in rows) text.AppendLine(row.ToMarkdown());
         return text.ToString();

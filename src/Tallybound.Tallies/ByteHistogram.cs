@@ -30,8 +30,8 @@ public static class ByteHistogram
         new Span<uint>(lanes, Lanes * 256).Clear();
         fixed (byte* start = source)
         {
-            byte* at = start, end = start + source.Length, last = end - 64;
-            while (at <= last)
+            byte* at = start, end = start + source.Length;
+            while (end - at >= 64)
             {
                 ulong first = Unsafe.ReadUnaligned<ulong>(at);
                 if (first == ulong.RotateLeft(first, 8) && *at == at[63])

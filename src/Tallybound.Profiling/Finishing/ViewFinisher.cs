@@ -37,6 +37,8 @@ internal sealed class ViewFinisher(RunParameters parameters)
     {
         ViewFacts facts = Facts(name, tally);
         if (facts.Symbols == 0) return new Finished(Empty(facts), null);
+        // What follows from the segments alone is worked out beside the rest where a second thread may be used and there is much of it.
+        Task<AlongSource>? along = segments is not null && parameters.Threads > 1 && sourceBytes > ReleaseAboveBytes ? Task.Run(() => AlongSource.Of(segments, windows, sourceBytes, (ulong)parameters.Seed)) : null;
         Dictionary<string, IReadOnlyList<long[]>>? pairs = keepPairs && facts.AlphabetSize <= 256 ? [] : null;
         contextPrice.Begin(Math.Min(facts.AlphabetSize, 256));
         List<OrderProfile> orders = Orders(tally, facts, sourceBytes, segments, pairs);
@@ -56,7 +58,7 @@ internal sealed class ViewFinisher(RunParameters parameters)
             LimitsNotMet = notMet.Count > 0 ? notMet : null,
             SymbolBlocks = blocks,
         };
-        if (segments is not null) profile = WithSegments(profile, segments, windows, sourceBytes);
+        if (segments is not null) profile = (along?.GetAwaiter().GetResult() ?? AlongSource.Of(segments, windows, sourceBytes, (ulong)parameters.Seed)).AddTo(profile);
         DrawingCountsOfView? drawing = keepCounts ? new DrawingCountsOfView(Series(facts.AlphabetSize, symbol => facts.Counts[symbol]), lengths, pairs) : null;
         return new Finished(profile, drawing);
     }
@@ -133,13 +135,6 @@ internal sealed class ViewFinisher(RunParameters parameters)
         (long tableBits, TableFormat format) = contextPrice.Tables();
         double bound = (facts.Symbols - 1) * order1.EntropyBitsPerSymbol / facts.Symbols;
         return new PriceMaker(facts, bound, "context").Make("context-huffman", contextPrice.PayloadBits + facts.PlainBits, tableBits, format.Name()) with { LongestCode = contextPrice.LongestCode };
-    }
-
-    private ViewProfile WithSegments(ViewProfile profile, ViewSegments segments, IReadOnlyList<byte[]> windows, long sourceBytes)
-    {
-        WindowPrices[] priced = [.. windows.Select(window => WindowPricing.Price(window, segments.SegmentBytes))];
-        IReadOnlyList<TableBlockPrice> curve = BlockSizeCurve.Whole(segments.Counts, priced, sourceBytes, (ulong)parameters.Seed);
-        return profile with { Segments = SegmentPricing.Series(segments.Counts), TableBlocks = curve, AdaptiveSplit = AdaptiveSplit.Find(segments.Counts, curve) };
     }
 
     private ContextMeasures MeasureOf(int alphabet, int order)

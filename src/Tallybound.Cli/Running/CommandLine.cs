@@ -26,8 +26,8 @@ internal static class CommandLine
                 StandardStreams.WriteOutput($"tallybound {Version}\n");
                 return ExitCode.Well;
             }
-            using var session = new ProfileSession(typed.Profile());
-            return session.Run();
+            using var invocation = new ProfileInvocation(typed.Profile());
+            return invocation.Run();
         }
         catch (UsageException e)
         {

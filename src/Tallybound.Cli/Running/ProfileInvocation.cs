@@ -12,7 +12,7 @@ using Tallybound.Sources;
 namespace Tallybound.Cli.Running;
 
 /// <summary>One <c>tallybound profile</c>: plan, run folder, run, report, summary, exit code.</summary>
-internal sealed class ProfileSession : IDisposable
+internal sealed class ProfileInvocation : IDisposable
 {
     private const string ReportsFolder = "reports";
 
@@ -23,7 +23,7 @@ internal sealed class ProfileSession : IDisposable
     private readonly long started = Stopwatch.GetTimestamp();
 
     /// <summary>Prepares to carry a request out, and begins to listen for Ctrl-C.</summary>
-    public ProfileSession(ProfileRequest request)
+    public ProfileInvocation(ProfileRequest request)
     {
         this.request = request;
         screen = new ErrorScreen(request.Quiet, request.JsonLog);

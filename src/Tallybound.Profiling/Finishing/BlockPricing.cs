@@ -14,6 +14,7 @@ internal sealed class BlockPricing
     private const long ExtensionAlwaysAtMost = 1 << 15;
 
     private const int CollectAboveItems = 1 << 20;
+    private const long CollectAboveSymbols = 256L << 20;
 
     private readonly long[] histogram = new long[256];
 
@@ -27,6 +28,7 @@ internal sealed class BlockPricing
         if (whole == 0) return null;
         long leftOverBits = facts.Symbols % n * facts.PlainBits;
         // One after the other: each may take a hundred million bytes for a moment, and both together would pass the memory that was promised.
+        if (facts.Symbols > CollectAboveSymbols) Collect();
         IndependentExtension? extension = Extension(facts, n, whole, leftOverBits);
         BlockCounts blocks = tally.Blocks(n);
         long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;

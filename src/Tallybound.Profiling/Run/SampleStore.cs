@@ -12,6 +12,7 @@ internal sealed class SampleStore
     private readonly HashSet<long>? chosen;
     private readonly PriorityQueue<Window, (ulong Rank, long Index)> kept = new(Comparer<(ulong, long)>.Create((a, b) => b.CompareTo(a)));
     private readonly Dictionary<long, Window> filling = [];
+    private readonly Stack<byte[]> spare = new();
 
     /// <summary>A store for a source.</summary>
     /// <param name="plan">The sample plan of the run.</param>
@@ -48,7 +49,7 @@ internal sealed class SampleStore
         {
             if (filling.TryGetValue(index, out Window? window)) return window;
             if (within != 0 || !Wanted(index)) return null;
-            window = new Window(index, new byte[SamplePlan.WindowBytes]);
+            window = new Window(index, spare.TryPop(out byte[]? bytes) ? bytes : new byte[SamplePlan.WindowBytes]);
             filling.Add(index, window);
             return window;
         }
@@ -68,7 +69,8 @@ internal sealed class SampleStore
         {
             filling.Remove(window.Index);
             kept.Enqueue(window, (plan.Rank(window.Index), window.Index));
-            if (kept.Count > SamplePlan.MostWindows) kept.Dequeue();
+            // On a stream windows come and go; their memory is used again instead of left to the collector.
+            if (kept.Count > SamplePlan.MostWindows) spare.Push(kept.Dequeue().Bytes);
         }
     }
 

@@ -12,7 +12,9 @@ public sealed unsafe partial class ByteTally
         if (other is not ByteTally tally || tally.HighestOrder != HighestOrder || tally.LongestBlock != LongestBlock)
             throw new ArgumentException($"A byte tally of order {HighestOrder} and blocks of {LongestBlock} was to be merged with {other}.", nameof(other));
         pairMatrix = null;
-        if (sinceSpill + tally.sinceSpill >= spillAfter)
+        // A counter that the last spill left alone may be just below 2^31, whatever was counted since: two of those still fit 32 bits, a third would not.
+        bool mayBeLarge = Symbols + tally.Symbols >= spillAfter;
+        if (mayBeLarge)
         {
             Spill();
             tally.Spill();
@@ -31,6 +33,7 @@ public sealed unsafe partial class ByteTally
         foreach ((long key, long count) in tally.carry) carry[key] = carry.GetValueOrDefault(key) + count;
         Symbols += tally.Symbols;
         sinceSpill += tally.sinceSpill;
+        if (mayBeLarge) Spill();
     }
 
     /// <inheritdoc/>

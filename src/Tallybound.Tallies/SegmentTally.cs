@@ -10,6 +10,9 @@ public sealed class SegmentTally
 {
     private const int Alphabet = 256;
     private const int LongestShift = 62;
+
+    /// <summary>Counts of this many segments take 128 MiB: no more is believed of a file before its checksum is known.</summary>
+    private const int MostPossible = 1 << 16;
     private readonly int mostSegments;
     private long[] counts = new long[Alphabet];
     private int shift;
@@ -17,11 +20,12 @@ public sealed class SegmentTally
 
     /// <summary>An empty tally.</summary>
     /// <param name="segmentBytes">Starting size of a segment, a power of two.</param>
-    /// <param name="mostSegments">Segments kept at most, an even number.</param>
+    /// <param name="mostSegments">Segments kept at most, an even number up to 65,536.</param>
     public SegmentTally(long segmentBytes, int mostSegments)
     {
         if (segmentBytes <= 0 || !BitOperations.IsPow2(segmentBytes)) throw new ArgumentException($"A segment of {segmentBytes} bytes was asked for; sizes are powers of two.", nameof(segmentBytes));
         if (mostSegments < 2 || mostSegments % 2 != 0) throw new ArgumentException($"{mostSegments} segments were allowed; the number is even.", nameof(mostSegments));
+        ArgumentOutOfRangeException.ThrowIfGreaterThan(mostSegments, MostPossible);
         shift = BitOperations.TrailingZeroCount(segmentBytes);
         this.mostSegments = mostSegments;
     }
@@ -94,7 +98,7 @@ public sealed class SegmentTally
     {
         using var reader = new TallyReader(stream, TallyKind.Segments);
         int shift = (int)reader.Read("segment size", LongestShift);
-        int most = (int)reader.Read("greatest number of segments", 1 << 20);
+        int most = (int)reader.Read("greatest number of segments", MostPossible);
         if (most < 2 || most % 2 != 0) throw new InvalidDataException("The tally is damaged: its greatest number of segments is odd or 0.");
         var tally = new SegmentTally(1L << shift, most);
         int used = (int)reader.Read("number of segments", most);

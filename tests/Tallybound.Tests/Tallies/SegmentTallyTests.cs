@@ -1,5 +1,6 @@
 using CsCheck;
 using Tallybound.Tallies;
+using Tallybound.Tallies.Files;
 using Xunit;
 
 namespace Tallybound.Tests.Tallies;
@@ -56,5 +57,21 @@ public sealed class SegmentTallyTests
                 return back.All.SequenceEqual(whole.All) && back.SegmentBytes == whole.SegmentBytes;
             }, iter: 300, threads: 1);
         Assert.Equal(300, cases);
+    }
+
+    [Fact]
+    public void A_file_that_asks_for_too_many_segments_is_refused_before_room_is_made()
+    {
+        Assert.Throws<ArgumentOutOfRangeException>(() => new SegmentTally(4096, 65_538));
+        using var stream = new MemoryStream();
+        using (var writer = new TallyWriter(stream, TallyKind.Segments))
+        {
+            writer.Write(12);
+            writer.Write(1 << 20);
+            writer.Write(1 << 20);
+            writer.WriteSparse(_ => { });
+        }
+        stream.Position = 0;
+        Assert.Contains("greatest number of segments", Assert.Throws<InvalidDataException>(() => SegmentTally.ReadFrom(stream)).Message, StringComparison.Ordinal);
     }
 }

@@ -1,5 +1,6 @@
 using CsCheck;
 using Tallybound.Tallies;
+using Tallybound.Tallies.Files;
 using Xunit;
 
 namespace Tallybound.Tests.Tallies;
@@ -156,6 +157,46 @@ public sealed class TallyLawTests
         twice.Merge(carried);
         plain.Merge(plain);
         Assert.True(TallyContent.Of(twice).Same(TallyContent.Of(plain)));
+    }
+
+    [Theory]
+    [InlineData(2_000_000_000L, 3)]
+    [InlineData(2_147_483_647L, 9)]
+    [InlineData(5_000_000_000L, 4)]
+    public void Merging_tallies_of_billions_loses_no_count(long count, int tallies)
+    {
+        // 2,000,000,000 and 2^31 - 1 stay in the 32-bit counters when they are read; 5,000,000,000 stands in the carry from the start.
+        using ByteTally sum = OfOneTriple(count);
+        for (int i = 1; i < tallies; i++)
+        {
+            using ByteTally next = OfOneTriple(count);
+            sum.Merge(next);
+        }
+        sum.Begin(0, []);
+        sum.Append("\u0000\u0000\u0000\u0000"u8);
+        var content = TallyContent.Of(sum);
+        Assert.Equal((tallies * count) + 2, content.Contexts[(2, 0, 0)].Fold0);
+        Assert.Equal((tallies * count) + 3, content.Contexts[(1, 0, 0)].Fold0);
+        Assert.Equal((tallies * count) + 1, content.Blocks[(3, 0)]);
+    }
+
+    /// <summary>A tally that holds the triple 0, 0, 0 in fold 0 at a multiple of 3 and nothing else, as if it were read from a checkpoint.</summary>
+    private static ByteTally OfOneTriple(long count)
+    {
+        using var stream = new MemoryStream();
+        using (var writer = new TallyWriter(stream, TallyKind.Bytes))
+        {
+            writer.Write(2);
+            writer.Write(3);
+            writer.Write(count);
+            for (int symbol = 0; symbol < 256; symbol++) writer.Write(0);
+            writer.WriteSparse(_ => { });
+            writer.WriteSparse(_ => { });
+            writer.WriteSparse(entry => entry(0, count));
+            for (int table = 0; table < 3; table++) writer.WriteSparse(_ => { });
+        }
+        stream.Position = 0;
+        return ByteTally.ReadFrom(stream);
     }
 
     [Fact]

@@ -1,4 +1,5 @@
 using System.Numerics;
+using System.Runtime.CompilerServices;
 using Tallybound.Coding.Codes;
 using Tallybound.Coding.Measures;
 using Tallybound.Coding.Tables;
@@ -30,11 +31,9 @@ internal sealed class BlockPricing
         // One after the other: each may take a hundred million bytes for a moment, and both together would pass the memory that was promised.
         if (facts.Symbols > CollectAboveSymbols) Collect();
         IndependentExtension? extension = Extension(facts, n, whole, leftOverBits);
-        BlockCounts blocks = tally.Blocks(n);
-        long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;
-        double entropyBits = Entropy.BitsPerSymbol(blocks.Counts);
-        (long tableBits, TableFormat format) = Table(facts.AlphabetSize, n, blocks.Symbols, histogram);
-        int inUse = blocks.Symbols.Length;
+        ObservedCode observed = Observe(facts, tally, n, leftOverBits);
+        if (observed.InUse > CollectAboveItems) Collect();
+        (long payload, double entropyBits, long tableBits, TableFormat format, int inUse) = observed;
         double bound = ((whole * entropyBits) + leftOverBits) / facts.Symbols;
         CodePrice price = new PriceMaker(facts, bound, "block").Make("block-huffman", payload, tableBits, format.Name()) with
         {
@@ -50,8 +49,19 @@ internal sealed class BlockPricing
             Independent = extension,
             Observed = new ObservedBlocks(payload, tableBits, price.FramingBits!.Value, price.TotalBits!.Value),
         };
-        if (inUse > CollectAboveItems) Collect();
         return (profile, price);
+    }
+
+    private readonly record struct ObservedCode(long PayloadBits, double EntropyBits, long TableBits, TableFormat Format, int InUse);
+
+    /// <summary>Apart, and never inlined: when it returns, nothing holds the blocks any more, however the code was compiled.</summary>
+    [MethodImpl(MethodImplOptions.NoInlining)]
+    private ObservedCode Observe(ViewFacts facts, ISymbolTally tally, int n, long leftOverBits)
+    {
+        BlockCounts blocks = tally.Blocks(n);
+        long payload = BlockHuffman.PayloadBits(blocks.Counts, histogram) + leftOverBits;
+        (long tableBits, TableFormat format) = Table(facts.AlphabetSize, n, blocks.Symbols, histogram);
+        return new ObservedCode(payload, Entropy.BitsPerSymbol(blocks.Counts), tableBits, format, blocks.Symbols.Length);
     }
 
     /// <summary>Gives the memory of large arrays back at once, where some were made: the next ones may be as large.</summary>

@@ -48,7 +48,7 @@ internal static class IndexPage
     {
         if (corpus.Bytes == 0) return;
         page.Raw("<section><h2>Rates of the whole</h2>\n<table><caption>Sizes with tables and framing; where a code would grow a source, that source is taken as stored.</caption>")
-            .Raw("<thead><tr><th scope=\"col\">code</th><th scope=\"col\">size</th><th scope=\"col\">bit/byte</th><th scope=\"col\">raw ÷ coded</th><th scope=\"col\">saving</th></tr></thead><tbody>\n");
+            .Raw("<thead><tr><th scope=\"col\">code</th><th scope=\"col\">bytes</th><th scope=\"col\">bit/byte</th><th scope=\"col\">raw ÷ coded</th><th scope=\"col\">saving</th></tr></thead><tbody>\n");
         foreach ((string key, long bytes) in corpus.Totals)
         {
             page.Raw(key == corpus.Verdict?.Code ? "<tr class=\"best\">" : "<tr>").Raw("<th scope=\"row\">").Text(CodeText.Of(key)).Raw("</th>");
@@ -63,7 +63,7 @@ internal static class IndexPage
     private static void WriteBounds(HtmlPage page, long raw, CorpusBounds bounds)
     {
         page.Raw("<table><caption>Beside them: what the counts alone say. A bound leaves out the model; an adaptive cost leaves out nothing.</caption>")
-            .Raw("<thead><tr><th scope=\"col\">figure</th><th scope=\"col\">size</th><th scope=\"col\">bit/byte</th><th scope=\"col\">raw ÷ coded</th><th scope=\"col\">saving</th></tr></thead><tbody>\n");
+            .Raw("<thead><tr><th scope=\"col\">figure</th><th scope=\"col\">bytes</th><th scope=\"col\">bit/byte</th><th scope=\"col\">raw ÷ coded</th><th scope=\"col\">saving</th></tr></thead><tbody>\n");
         Row("static order-0 bound (one fixed table a source, no memory)", bounds.Order0BoundBits);
         Row("adaptive cost, order 0", bounds.AdaptiveOrder0Bits);
         Row("adaptive cost, order 1", bounds.AdaptiveOrder1Bits);
@@ -81,7 +81,7 @@ internal static class IndexPage
 
     private static void SizeCells(HtmlPage page, long raw, long bytes)
     {
-        page.Raw("<td title=\"").Text(SizeText.Count(bytes)).Raw(" bytes\">").Text(SizeText.Bytes(bytes)).Raw("</td><td>")
+        page.Raw("<td title=\"").Text(SizeText.Bytes(bytes)).Raw("\">").Text(SizeText.Count(bytes)).Raw("</td><td>")
             .Text(raw == 0 ? "" : SizeText.Rate(8.0 * bytes / raw)).Raw("</td><td>").Text(SizeText.Ratio(raw, bytes)).Raw("</td><td>").Text(SizeText.Saving(raw, bytes)).Raw("</td>");
     }
 
@@ -89,14 +89,15 @@ internal static class IndexPage
     {
         IReadOnlyList<SourceSummary> heaviest = result.Ledger.Heaviest(HeaviestShown);
         if (heaviest.Count == 0) return;
-        page.Raw("<section><h2>The heaviest sources</h2>\n<table><caption>").Text(heaviest.Count < result.Corpus.Sources ? $"The {heaviest.Count} with the most bytes; all of them are in sources.csv and profile.json." : "All sources that were read.")
-            .Raw("</caption><thead><tr><th scope=\"col\">source</th><th scope=\"col\">size</th><th scope=\"col\">symbols in use</th><th scope=\"col\">order-0 bound, bit/byte</th>")
-            .Raw("<th scope=\"col\">Huffman</th><th scope=\"col\">best</th><th scope=\"col\">best code</th><th scope=\"col\">raw ÷ best</th></tr></thead><tbody>\n");
+        page.Raw("<section><h2>The heaviest sources</h2>\n<table><caption>").Text(heaviest.Count < result.Corpus.Sources ? $"The {heaviest.Count} with the most bytes; all of them are in sources.csv and profile.json." : "All sources that were read.").Text(" A symbol is one of the first view; coded bytes include table and framing.")
+            .Raw("</caption><thead><tr><th scope=\"col\">source</th><th scope=\"col\">bytes</th><th scope=\"col\">symbols in use</th><th scope=\"col\">order-0 bound, bit/symbol</th><th scope=\"col\">held-out order 1, bit/symbol</th>")
+            .Raw("<th scope=\"col\">Huffman, bytes</th><th scope=\"col\">best, bytes</th><th scope=\"col\" class=\"text\">best code</th><th scope=\"col\">raw ÷ best</th></tr></thead><tbody>\n");
         foreach (SourceSummary line in heaviest)
         {
-            page.Raw("<tr><th scope=\"row\" class=\"name\">").Text(line.Name).Raw("</th><td title=\"").Text(SizeText.Count(line.Bytes ?? 0)).Raw(" bytes\">").Text(SizeText.Bytes(line.Bytes ?? 0))
+            page.Raw("<tr><th scope=\"row\" class=\"name\">").Text(line.Name).Raw("</th><td title=\"").Text(SizeText.Bytes(line.Bytes ?? 0)).Raw("\">").Text(SizeText.Count(line.Bytes ?? 0))
                 .Raw("</td><td>").Text(line.SymbolsInUse is { } symbols ? SizeText.Count(symbols) : "").Raw("</td><td>").Text(line.EntropyBitsPerSymbol is { } h ? SizeText.Rate(h) : "")
-                .Raw("</td><td>").Text(line.HuffmanBytes is { } huffman ? SizeText.Bytes(huffman) : "").Raw("</td><td>").Text(line.BestBytes is { } best ? SizeText.Bytes(best) : "")
+                .Raw("</td><td>").Text(line.HeldOutOrder1BitsPerSymbol is { } heldOut ? SizeText.Rate(heldOut) : "")
+                .Raw("</td><td>").Text(line.HuffmanBytes is { } huffman ? SizeText.Count(huffman) : "").Raw("</td><td>").Text(line.BestBytes is { } best ? SizeText.Count(best) : "")
                 .Raw("</td><td class=\"text\">").Text(line.BestCode is { } code ? CodeText.Of(code) : "").Raw("</td><td>").Text(line is { Bytes: { } raw, BestBytes: { } coded } ? SizeText.Ratio(raw, coded) : "").Raw("</td></tr>\n");
         }
         page.Raw("</tbody></table></section>\n");
@@ -107,7 +108,7 @@ internal static class IndexPage
         IReadOnlyList<SourceSummary> failures = [.. result.Ledger.Failures(FailuresShown), .. result.Ledger.WithStatus(SourceStatus.Skipped, FailuresShown)];
         if (failures.Count == 0) return;
         page.Raw("<section><h2>Not read, or not whole</h2>\n<table><caption>Each with its reason; all of them are in sources.csv.</caption>")
-            .Raw("<thead><tr><th scope=\"col\">source</th><th scope=\"col\">what happened</th><th scope=\"col\">reason</th></tr></thead><tbody>\n");
+            .Raw("<thead><tr><th scope=\"col\">source</th><th scope=\"col\" class=\"text\">what happened</th><th scope=\"col\" class=\"text\">reason</th></tr></thead><tbody>\n");
         foreach (SourceSummary line in failures)
         {
             page.Raw("<tr><th scope=\"row\" class=\"name\">").Text(line.Name).Raw("</th><td class=\"text\">").Text(line.Status.ToString().ToLowerInvariant())

@@ -12,9 +12,9 @@ internal static class PageStyle
         h1{font-size:1.5rem;overflow-wrap:anywhere}h2{font-size:1.2rem;margin:2.5rem 0 .5rem;break-after:avoid}
         p,li,dd{max-width:75ch}.verdict{font-size:1.2rem;font-weight:600}.stopped{border-left:.3rem solid #d55e00;padding-left:.7rem}
         section{overflow-x:auto}table{border-collapse:collapse;font-variant-numeric:tabular-nums;margin:.5rem 0 1.5rem}
-        caption{text-align:left;padding:.3rem 0;max-width:75ch}th,td{padding:.25rem .7rem;border-bottom:1px solid var(--rule);vertical-align:top}
+        caption{text-align:left;padding:.3rem 0;max-width:75ch}th,td{padding:.25rem .45rem;border-bottom:1px solid var(--rule);vertical-align:top}
         thead th{text-align:right;background:var(--soft)}thead th:first-child,thead th.text,tbody th,.text{text-align:left}tbody th{font-weight:400;min-width:10rem}thead th{vertical-align:bottom}td{text-align:right;white-space:nowrap}
-        .name{overflow-wrap:anywhere;min-width:12rem}.text{white-space:normal}td.text{min-width:11rem}.best{background:var(--best)}.best th,.best td{font-weight:600}
+        .name{overflow-wrap:anywhere;min-width:10rem}.text{white-space:normal}td.text{min-width:8rem}.best{background:var(--best)}.best th,.best td{font-weight:600}
         tr{break-inside:avoid}dt{font-weight:600}dd{margin:0 0 .4rem;overflow-wrap:anywhere}
         @media print{main{max-width:none;padding:0}section{overflow:visible}}
         """;

@@ -29,7 +29,9 @@ public static class ExpGolombCode
     public static long Decode(ref BitReader reader, int k)
     {
         Check(0, k);
-        return ((EliasGamma.Decode(ref reader) - 1) << k) | (long)reader.Read(k);
+        long high = EliasGamma.Decode(ref reader) - 1;
+        if (high >> (62 - k) != 0) throw new InvalidDataException("The bits stand for a number of more than 62 bits.");
+        return (high << k) | (long)reader.Read(k);
     }
 
     private static void Check(long value, int k)

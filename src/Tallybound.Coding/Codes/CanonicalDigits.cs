@@ -62,6 +62,7 @@ public sealed class CanonicalDigits
         int length = 0;
         foreach (byte digit in digits)
         {
+            if (digit >= Radix) throw new InvalidDataException($"{digit} is no digit in radix {Radix}.");
             word = (word * Radix) + digit;
             if (++length > byte.MaxValue) throw new InvalidDataException("The digits are no word of this code.");
             if (!symbols.TryGetValue((length, word), out int symbol)) continue;

@@ -7,11 +7,14 @@ namespace Tallybound.Coding.Codes;
 /// S. Golomb, Run-length encodings, IEEE Trans. IT-12 (1966).</summary>
 public static class GolombCode
 {
+    /// <summary>Largest parameter, 2^62.</summary>
+    public const long LargestParameter = 1L << 62;
+
     private const int LongestQuotient = 1 << 20;
 
     /// <summary>Bits of a number's word.</summary>
     /// <param name="value">At least 0.</param>
-    /// <param name="m">The parameter, at least 1.</param>
+    /// <param name="m">The parameter, 1 to 2^62.</param>
     public static long Length(long value, long m)
     {
         Check(value, m);
@@ -38,7 +41,7 @@ public static class GolombCode
     }
 
     /// <summary>Reads a number.</summary>
-    /// <exception cref="InvalidDataException">The bits end early, or the quotient is above 2^20.</exception>
+    /// <exception cref="InvalidDataException">The bits end early, the quotient is above 2^20, or the number does not fit a long.</exception>
     public static long Decode(ref BitReader reader, long m)
     {
         Check(0, m);
@@ -50,6 +53,7 @@ public static class GolombCode
         long shortWords = (1L << bits) - m;
         long remainder = (long)reader.Read(bits - 1);
         if (remainder >= shortWords) remainder = ((remainder << 1) | (long)reader.Read(1)) - shortWords;
+        if (quotient > (long.MaxValue - remainder) / m) throw new InvalidDataException($"The quotient {quotient} by {m} makes a number of more than 63 bits.");
         return (quotient * m) + remainder;
     }
 
@@ -73,5 +77,6 @@ public static class GolombCode
     {
         ArgumentOutOfRangeException.ThrowIfNegative(value);
         ArgumentOutOfRangeException.ThrowIfLessThan(m, 1);
+        ArgumentOutOfRangeException.ThrowIfGreaterThan(m, LargestParameter);
     }
 }

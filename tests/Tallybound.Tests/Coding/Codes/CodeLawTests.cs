@@ -210,6 +210,8 @@ public sealed class CodeLawTests
         Assert.Throws<ArgumentException>(() => new CanonicalCode([1, 1, 1]));
         Assert.Throws<ArgumentException>(() => new CanonicalCode([64]));
         Assert.Throws<ArgumentException>(() => new CanonicalDigits([1, 1, 1, 1], 3));
+        // 1·3 + 5 is 22 in radix 3, but 5 is no digit.
+        Assert.Throws<InvalidDataException>(() => new CanonicalDigits([1, 2, 2, 2, 2, 2, 2], 3).Decode([1, 5]));
         Assert.Throws<InvalidDataException>(() =>
         {
             var reader = new BitReader([0xFF]);

@@ -56,6 +56,87 @@ public sealed class IntegerCodeTests
     public void Exp_golomb_writes_what_it_counts_and_reads_it_back(int k) => Check(
         Values, value => ExpGolombCode.Length(value, k), (long value, ref BitWriter writer) => ExpGolombCode.Encode(value, k, ref writer), (ref BitReader reader) => ExpGolombCode.Decode(ref reader, k));
 
+    [Fact]
+    public void Golomb_codes_the_largest_numbers_too()
+    {
+        foreach (long m in new[] { (1L << 62) - 1, 1L << 62 })
+        {
+            foreach (long value in new[] { 0, m - 1, m, long.MaxValue - 1, long.MaxValue })
+            {
+                var writer = new BitWriter();
+                GolombCode.Encode(value, m, ref writer);
+                var reader = new BitReader(writer.ToArray());
+                Assert.Equal(value, GolombCode.Decode(ref reader, m));
+                Assert.Equal(GolombCode.Length(value, m), writer.Bits);
+            }
+        }
+        Assert.Throws<ArgumentOutOfRangeException>(() => GolombCode.Length(1, (1L << 62) + 1));
+    }
+
+    [Fact]
+    public void Words_of_numbers_that_are_too_large_are_refused_not_wrapped()
+    {
+        Assert.Throws<InvalidDataException>(() =>
+        {
+            // A quotient of 3 by 2^62 makes 3·2^62, above 2^63.
+            byte[] bits = [0b1110_0000, .. new byte[16]];
+            var reader = new BitReader(bits);
+            GolombCode.Decode(ref reader, 1L << 62);
+        });
+        foreach (int k in new[] { 1, 8, 32 })
+        {
+            // γ of 2^(62 − k) + 1, so that value/2^k is 2^(62 − k): one doubling too many.
+            var writer = new BitWriter();
+            EliasGamma.Encode((1L << (62 - k)) + 1, ref writer);
+            writer.Write(0, k);
+            byte[] bits = writer.ToArray();
+            Assert.Throws<InvalidDataException>(() =>
+            {
+                var reader = new BitReader(bits);
+                ExpGolombCode.Decode(ref reader, k);
+            });
+        }
+    }
+
+    [Fact]
+    public void A_parameter_searched_is_the_cheapest_of_all_and_never_dearer_than_the_rule_or_rice()
+    {
+        int cases = 0;
+        Gen.Select(Gen.Long[0, 60], Gen.Long[0, 50]).Array[1, 20].Sample(
+            numbers =>
+            {
+                cases++;
+                long[] values = [.. numbers.Select(number => number.Item1)], counts = [.. numbers.Select(number => number.Item2)];
+                long Bits(long m) => numbers.Sum(number => number.Item2 * GolombCode.Length(number.Item1, m));
+                (long m, long bits) = GolombParameter.BySearch(values, counts);
+                (int k, long riceBits) = GolombParameter.Rice(values, counts);
+                return bits == Enumerable.Range(1, 200).Min(each => Bits(each)) && bits == Bits(m) && bits <= Bits(GolombParameter.ByRule(values, counts))
+                    && riceBits == Enumerable.Range(0, 10).Min(each => Bits(1L << each)) && riceBits == Bits(1L << k);
+            }, iter: 500, threads: 1);
+        Assert.Equal(500, cases);
+    }
+
+    [Fact]
+    public void A_search_among_large_numbers_beats_rice_and_the_rule()
+    {
+        int cases = 0;
+        Gen.Select(Gen.Int[1, 61].SelectMany(bit => Gen.Long[0, 1L << bit]), Gen.Long[1, 1_000_000]).Array[1, 12].Sample(
+            numbers =>
+            {
+                cases++;
+                long[] values = [.. numbers.Select(number => number.Item1)], counts = [.. numbers.Select(number => number.Item2)];
+                long bits = GolombParameter.BySearch(values, counts).PayloadBits, rule = GolombParameter.ByRule(values, counts);
+                UInt128 byRule = 0;
+                foreach ((long value, long count) in numbers) byRule += (UInt128)count * (UInt128)GolombCode.Length(value, rule);
+                return (UInt128)bits <= byRule && bits <= GolombParameter.Rice(values, counts).PayloadBits;
+            }, iter: 300, threads: 1);
+        Assert.Equal(300, cases);
+        Assert.Equal((1, 0L), GolombParameter.BySearch([], []));
+        Assert.Equal((1, 9L), GolombParameter.BySearch([0], [9]));
+        Assert.Equal((0, 9L), GolombParameter.Rice([0], [9]));
+        Assert.Equal(GolombCode.ParameterFor(0.9), GolombParameter.ByRule([9], [1]));
+    }
+
     /// <summary>Expected lengths for a geometric distribution, computed by independent code: θ 0.7, 0.8, 0.9.</summary>
     [Theory]
     [InlineData(0.7, 2, 2.960784)]

@@ -7,18 +7,10 @@ internal sealed class MergeSteps(int leaves)
     // Made once at the size that nearly all constructions need.
     private readonly List<(int First, int Second)> runs = new((leaves * 2) + 16);
 
-    // A step that pairs the items of one run makes many packages; all others make one.
-    private readonly List<long> madeOfPairs = [];
-
     /// <summary>Adds a step.</summary>
     /// <param name="first">Run of the first item of each package.</param>
     /// <param name="second">Run of the second item; the same run where a run is paired with itself.</param>
-    /// <param name="made">Packages made; 1 where the runs differ.</param>
-    public void Add(int first, int second, long made)
-    {
-        runs.Add((first, second));
-        if (first == second) madeOfPairs.Add(made);
-    }
+    public void Add(int first, int second) => runs.Add((first, second));
 
     /// <summary>Adds to the histogram how many leaves have each depth, from the root of the last step down.</summary>
     /// <remarks>The items of a run are used up in order, so that its depths are runs too; most have one. They are gathered last item first.</remarks>

@@ -75,7 +75,7 @@ internal static class WeightRuns
         void Add(TWeight packed, long made, int one, int two, ref TCost to)
         {
             packages.Enqueue((packed, made));
-            steps?.Add(one, two, made);
+            steps?.Add(one, two);
             to.Add(packed, made);
             if (packageLeft == 0) NextPackage();
         }

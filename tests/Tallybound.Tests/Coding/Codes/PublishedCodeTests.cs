@@ -1,3 +1,5 @@
+using System.Globalization;
+using System.Numerics;
 using System.Text.Json.Nodes;
 using Tallybound.Coding.Bits;
 using Tallybound.Coding.Codes;
@@ -27,7 +29,7 @@ public sealed class PublishedCodeTests
     [Fact]
     public void Every_value_names_its_source_and_status()
     {
-        Assert.Equal(33, Values.Count);
+        Assert.Equal(39, Values.Count);
         Assert.All(Values.Values, value => Assert.True(((string)value["source"]!).Length > 2 && value["status"]!.AsArray().Count > 0));
     }
 
@@ -104,6 +106,54 @@ public sealed class PublishedCodeTests
         JsonNode t81 = Values["t81-kraft"];
         string[] sums = [.. t81["input"]!.AsObject().Select(table => KraftSum.Of([.. table.Value!.AsArray().SelectMany((count, at) => Enumerable.Repeat((byte)(at + 1), (int)count!))], 2))];
         Assert.Equal(t81["expected"]!.AsArray().Select(sum => (string)sum!), sums);
+    }
+
+    [Fact]
+    public void The_tables_of_fax_leave_room_for_the_end_of_line()
+    {
+        JsonNode t4 = Values["t4-kraft"];
+        byte[] Of(params string[] tables) => [.. tables.SelectMany(table => t4["input"]![table]!.AsArray()).Select(length => (byte)(int)length!)];
+        string[] expected = [.. t4["expected"]!.AsArray().Select(sum => (string)sum!)];
+        Assert.Equal(128 + 54 + 13, Of("terminating-white", "terminating-black", "make-up-white", "make-up-black", "extended").Length);
+        Assert.Equal(expected[0], KraftSum.Of(Of("terminating-white"), 2));
+        Assert.Equal(expected[1], KraftSum.Of(Of("terminating-black"), 2));
+        foreach (string colour in new[] { "white", "black" })
+        {
+            Assert.Equal(expected[2], KraftSum.Of(Of("terminating-" + colour, "make-up-" + colour), 2));
+            Assert.Equal(expected[3], KraftSum.Of(Of("terminating-" + colour, "make-up-" + colour, "extended"), 2));
+        }
+    }
+
+    [Fact]
+    public void Powers_of_three_reach_the_entropy_in_radix_3_at_the_published_rates()
+    {
+        long[] counts = [9, 3, 3, 3, 3, 1, 1, 1, 1, 1, 1];
+        string[] rates = [.. Values["pow3"]["expected"]!.AsArray().Select(rate => (string)rate!)];
+        Assert.Equal(["17/9", "binary 82/27"], rates);
+        var lengths = new byte[counts.Length];
+        Huffman.Lengths(counts, lengths, 3);
+        Assert.Equal(17 * 3, Huffman.PayloadDigits(counts, lengths));
+        Huffman.Lengths(counts, lengths);
+        Assert.Equal(82, Huffman.PayloadDigits(counts, lengths));
+        Assert.Equal(17.0 / 9, Entropy.BitsPerSymbol(counts) / Math.Log2(3), 1e-12);
+    }
+
+    /// <summary>A coin of one in ten: blocks of each length counted in proportion, so that expected and counted bits are one.</summary>
+    [Theory]
+    [InlineData(1)]
+    [InlineData(2)]
+    [InlineData(3)]
+    [InlineData(4)]
+    [InlineData(5)]
+    [InlineData(6)]
+    public void Blocks_of_a_coin_of_one_in_ten_cost_the_published_bits_a_block(int blockLength)
+    {
+        string[] fraction = ((string)Values[$"block-b10-n{blockLength}"]["expected"]!).Split('/');
+        double bitsPerBlock = double.Parse(fraction[0], CultureInfo.InvariantCulture) / (fraction.Length > 1 ? double.Parse(fraction[1], CultureInfo.InvariantCulture) : 1);
+        long[] blocks = [.. Enumerable.Range(0, 1 << blockLength).Select(block => (long)Math.Pow(9, blockLength - BitOperations.PopCount((uint)block)))];
+        long payload = BlockHuffman.PayloadBits(blocks, new long[256]);
+        Assert.Equal(bitsPerBlock, payload / Math.Pow(10, blockLength), 1e-12);
+        Assert.Equal(bitsPerBlock, HuffmanExtension.Of([9, 1], blockLength).ExpectedBitsPerSymbol * blockLength, 1e-12);
     }
 
     [Fact]

@@ -27,16 +27,32 @@ internal sealed class SymbolSeriesConverter : JsonConverter<SymbolSeries>
 {
     public override SymbolSeries Read(ref Utf8JsonReader reader, Type typeToConvert, JsonSerializerOptions options)
     {
-        using JsonDocument document = JsonDocument.ParseValue(ref reader);
-        JsonElement root = document.RootElement;
-        if (root.ValueKind != JsonValueKind.Array) throw new JsonException("A symbol series is an array.");
-        if (root.GetArrayLength() > 0 && root[0].ValueKind == JsonValueKind.Array)
+        if (reader.TokenType != JsonTokenType.StartArray) throw new JsonException("A symbol series is an array.");
+        var dense = new List<long>();
+        var pairs = new List<long[]>();
+        while (reader.Read() && reader.TokenType != JsonTokenType.EndArray)
         {
-            long[][] pairs = root.EnumerateArray().Select(pair => new[] { pair[0].GetInt64(), pair[1].GetInt64() }).ToArray();
-            return SymbolSeries.FromPairs(pairs);
+            if (reader.TokenType == JsonTokenType.StartArray) pairs.Add(Pair(ref reader));
+            else dense.Add(Number(ref reader));
         }
-        return SymbolSeries.FromDense(root.EnumerateArray().Select(number => number.GetInt64()).ToArray());
+        if (dense.Count > 0 && pairs.Count > 0) throw new JsonException("A symbol series is dense or sparse, not both.");
+        return pairs.Count > 0 ? SymbolSeries.FromPairs([.. pairs]) : SymbolSeries.FromDense([.. dense]);
     }
+
+    private static long[] Pair(ref Utf8JsonReader reader)
+    {
+        long[] pair = new long[2];
+        for (int i = 0; i < pair.Length; i++)
+        {
+            reader.Read();
+            pair[i] = Number(ref reader);
+        }
+        if (!reader.Read() || reader.TokenType != JsonTokenType.EndArray) throw new JsonException("A sparse symbol series holds pairs.");
+        return pair;
+    }
+
+    private static long Number(ref Utf8JsonReader reader) =>
+        reader.TokenType == JsonTokenType.Number && reader.TryGetInt64(out long number) ? number : throw new JsonException("A symbol series holds whole numbers.");
 
     public override void Write(Utf8JsonWriter writer, SymbolSeries value, JsonSerializerOptions options)
     {

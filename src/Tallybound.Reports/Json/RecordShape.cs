@@ -1,0 +1,32 @@
+using Tallybound.Profiling.Records;
+
+namespace Tallybound.Reports.Json;
+
+/// <summary>Checks what a record's types do not say, so that whoever draws it meets no list of another length.</summary>
+internal static class RecordShape
+{
+    private const int PairLength = 2;
+
+    /// <summary>What is wrong with a source's record; null: nothing is.</summary>
+    public static string? Fault(SourceProfile profile)
+    {
+        if (profile.Bytes < 0) return "bytes is below 0";
+        foreach (ViewProfile view in profile.Views ?? [])
+            if (Fault(view) is { } fault) return $"view {view.View}: {fault}";
+        return null;
+    }
+
+    private static string? Fault(ViewProfile view)
+    {
+        if (view.Orders.Any(order => order.EntropyBitsPerSymbolInterval is { Length: not PairLength })) return "entropyBitsPerSymbolInterval holds no pair";
+        if (view.TableBlocks is { } blocks && blocks.Any(block => block.TotalBitsInterval is { Length: not PairLength })) return "totalBitsInterval holds no pair";
+        if (view.Segments is { } segments && !SameLength(segments)) return "the lists of segments differ in length";
+        if (view.PairCounts is { } contexts && contexts.Any(context => !int.TryParse(context.Key, out _) || context.Value.Any(pair => pair.Length != PairLength)))
+            return "pairCounts holds no pairs under a context";
+        return null;
+    }
+
+    private static bool SameLength(SegmentSeries segments) =>
+        segments.SourceTableBits.Count == segments.OwnTableBits.Count && segments.PreviousTableBits.Count == segments.OwnTableBits.Count &&
+        segments.DivergenceBits.Count == segments.OwnTableBits.Count;
+}

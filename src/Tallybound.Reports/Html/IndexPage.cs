@@ -1,7 +1,6 @@
 using System.Globalization;
 using System.Text;
 using Tallybound.Profiling.Records;
-using Tallybound.Profiling.Run;
 using Tallybound.Profiling.Wording;
 using Tallybound.Reports.Files;
 using Tallybound.Reports.Json;
@@ -13,32 +12,31 @@ namespace Tallybound.Reports.Html;
 internal static class IndexPage
 {
     private const int HeaviestShown = 50;
-    private const int FailuresShown = 200;
 
     /// <summary>Writes the page of a run.</summary>
-    public static void Write(string path, RunResult result) => WholeFile.Write(path, stream =>
+    public static void Write(string path, ReportContent content) => WholeFile.Write(path, stream =>
     {
         var page = new HtmlPage();
-        WriteHead(page, result);
-        WriteRates(page, result.Corpus);
-        WriteHeaviest(page, result);
-        WriteFailures(page, result);
+        WriteHead(page, content);
+        WriteRates(page, content.Corpus);
+        WriteHeaviest(page, content);
+        WriteFailures(page, content);
         WriteCautions(page);
-        WriteProvenance(page, result.Run);
+        WriteProvenance(page, content);
         page.Raw("</main></body></html>\n");
         stream.Write(Encoding.UTF8.GetBytes(page.ToString()));
     });
 
-    private static void WriteHead(HtmlPage page, RunResult result)
+    private static void WriteHead(HtmlPage page, ReportContent content)
     {
-        CorpusProfile corpus = result.Corpus;
-        string title = result.Run.Parameters.Inputs.Count > 0 ? string.Join(", ", result.Run.Parameters.Inputs) : "run";
+        CorpusProfile corpus = content.Corpus;
+        string title = content.Run.Parameters.Inputs.Count > 0 ? string.Join(", ", content.Run.Parameters.Inputs) : "run";
         page.Raw("<!DOCTYPE html>\n<html lang=\"en\"><head><meta charset=\"utf-8\">")
             .Raw("<meta http-equiv=\"Content-Security-Policy\" content=\"default-src 'none'; style-src 'unsafe-inline'\">")
             .Raw("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\"><title>").Text(title).Raw(" — Tallybound</title><style>")
             .Raw(PageStyle.Css).Raw("</style></head>\n<body><main>\n<h1>").Text(title).Raw("</h1>\n");
         page.Raw("<p class=\"verdict\">").Text(corpus.Verdict?.Sentence ?? "Nothing was read, so there is nothing to say of sizes.").Raw("</p>\n");
-        if (!result.Complete) page.Raw("<p class=\"stopped\">").Text($"The run is not complete: {result.Run.EndedBecause ?? "it was stopped"}. The figures cover what was read.").Raw("</p>\n");
+        if (!content.Run.Complete) page.Raw("<p class=\"stopped\">").Text($"The run is not complete: {content.Run.EndedBecause ?? "it was stopped"}. The figures cover what was read.").Raw("</p>\n");
         page.Raw("<p>").Text(
             $"{SizeText.Count(corpus.Profiled)} sources read whole, {SizeText.Count(corpus.Partial)} in part, {SizeText.Count(corpus.Failed)} failed, " +
             $"{SizeText.Count(corpus.Skipped)} skipped, {SizeText.Count(corpus.ExcludedByRule)} kept out by --include and --exclude; {SizeText.Count(corpus.Bytes)} bytes counted, every one of them.").Raw("</p>\n");
@@ -85,11 +83,11 @@ internal static class IndexPage
             .Text(raw == 0 ? "" : SizeText.Rate(8.0 * bytes / raw)).Raw("</td><td>").Text(SizeText.Ratio(raw, bytes)).Raw("</td><td>").Text(SizeText.Saving(raw, bytes)).Raw("</td>");
     }
 
-    private static void WriteHeaviest(HtmlPage page, RunResult result)
+    private static void WriteHeaviest(HtmlPage page, ReportContent content)
     {
-        IReadOnlyList<SourceSummary> heaviest = result.Ledger.Heaviest(HeaviestShown);
+        IReadOnlyList<SourceSummary> heaviest = [.. content.Listed.Take(HeaviestShown)];
         if (heaviest.Count == 0) return;
-        page.Raw("<section><h2>The heaviest sources</h2>\n<table><caption>").Text(heaviest.Count < result.Corpus.Sources ? $"The {heaviest.Count} with the most bytes; all of them are in sources.csv and profile.json." : "All sources that were read.").Text(" A symbol is one of the first view; coded bytes include table and framing.")
+        page.Raw("<section><h2>The heaviest sources</h2>\n<table><caption>").Text(heaviest.Count < content.Corpus.Sources ? $"The {heaviest.Count} with the most bytes; all of them are in sources.csv and profile.json." : "All sources that were read.").Text(" A symbol is one of the first view; coded bytes include table and framing.")
             .Raw("</caption><thead><tr><th scope=\"col\">source</th><th scope=\"col\">bytes</th><th scope=\"col\">symbols in use</th><th scope=\"col\">order-0 bound, bit/symbol</th><th scope=\"col\">held-out order 1, bit/symbol</th>")
             .Raw("<th scope=\"col\">Huffman, bytes</th><th scope=\"col\">best, bytes</th><th scope=\"col\" class=\"text\">best code</th><th scope=\"col\">raw ÷ best</th></tr></thead><tbody>\n");
         foreach (SourceSummary line in heaviest)
@@ -103,9 +101,9 @@ internal static class IndexPage
         page.Raw("</tbody></table></section>\n");
     }
 
-    private static void WriteFailures(HtmlPage page, RunResult result)
+    private static void WriteFailures(HtmlPage page, ReportContent content)
     {
-        IReadOnlyList<SourceSummary> failures = [.. result.Ledger.Failures(FailuresShown), .. result.Ledger.WithStatus(SourceStatus.Skipped, FailuresShown)];
+        IReadOnlyList<SourceSummary> failures = [.. content.Failures, .. content.Skipped];
         if (failures.Count == 0) return;
         page.Raw("<section><h2>Not read, or not whole</h2>\n<table><caption>Each with its reason; all of them are in sources.csv.</caption>")
             .Raw("<thead><tr><th scope=\"col\">source</th><th scope=\"col\" class=\"text\">what happened</th><th scope=\"col\" class=\"text\">reason</th></tr></thead><tbody>\n");
@@ -124,11 +122,12 @@ internal static class IndexPage
         page.Raw("</ul></section>\n");
     }
 
-    private static void WriteProvenance(HtmlPage page, RunRecord run)
+    private static void WriteProvenance(HtmlPage page, ReportContent content)
     {
+        RunRecord run = content.Run;
         page.Raw("<section data-provenance><h2>Provenance</h2><dl>\n");
         Entry("made", $"{run.FinishedUtc.ToString("yyyy-MM-dd HH:mm:ss", CultureInfo.InvariantCulture)} UTC, started {run.StartedUtc.ToString("HH:mm:ss", CultureInfo.InvariantCulture)}");
-        Entry("program", "tallybound " + ProfileDocument.ToolVersion);
+        Entry("program", "tallybound " + content.ToolVersion);
         Entry("plan", run.PlanDigest);
         Entry("seed", run.Parameters.Seed.ToString(CultureInfo.InvariantCulture));
         Entry("machine", $"{run.Machine.OperatingSystem}, {run.Machine.Architecture}, {run.Machine.Processors} processors, {run.Machine.Runtime}");

@@ -45,7 +45,7 @@ internal static class IndexPage
     private static void WriteRates(HtmlPage page, CorpusProfile corpus)
     {
         if (corpus.Bytes == 0) return;
-        page.Raw("<section><h2>Rates of the whole</h2>\n<table><caption>Sizes with tables and framing; where a code would grow a source, that source is taken as stored.</caption>")
+        page.Raw("<section tabindex=\"0\" aria-label=\"Rates of the whole\"><h2>Rates of the whole</h2>\n<table><caption>Sizes with tables and framing; where a code would grow a source, that source is taken as stored.</caption>")
             .Raw("<thead><tr><th scope=\"col\">code</th><th scope=\"col\">bytes</th><th scope=\"col\">bit/byte</th><th scope=\"col\">raw ÷ coded</th><th scope=\"col\">saving</th></tr></thead><tbody>\n");
         foreach ((string key, long bytes) in corpus.Totals)
         {
@@ -87,7 +87,7 @@ internal static class IndexPage
     {
         IReadOnlyList<SourceSummary> heaviest = [.. content.Listed.Take(HeaviestShown)];
         if (heaviest.Count == 0) return;
-        page.Raw("<section><h2>The heaviest sources</h2>\n<table><caption>").Text(heaviest.Count < content.Corpus.Sources ? $"The {heaviest.Count} with the most bytes; all of them are in sources.csv and profile.json." : "All sources that were read.").Text(" A symbol is one of the first view; coded bytes include table and framing.")
+        page.Raw("<section tabindex=\"0\" aria-label=\"The heaviest sources\"><h2>The heaviest sources</h2>\n<table><caption>").Text(heaviest.Count < content.Corpus.Sources ? $"The {heaviest.Count} with the most bytes; all of them are in sources.csv and profile.json." : "All sources that were read.").Text(" A symbol is one of the first view; coded bytes include table and framing.")
             .Raw("</caption><thead><tr><th scope=\"col\">source</th><th scope=\"col\">bytes</th><th scope=\"col\">symbols in use</th><th scope=\"col\">order-0 bound, bit/symbol</th><th scope=\"col\">held-out order 1, bit/symbol</th>")
             .Raw("<th scope=\"col\">Huffman, bytes</th><th scope=\"col\">best, bytes</th><th scope=\"col\" class=\"text\">best code</th><th scope=\"col\">raw ÷ best</th></tr></thead><tbody>\n");
         foreach (SourceSummary line in heaviest)
@@ -105,7 +105,7 @@ internal static class IndexPage
     {
         IReadOnlyList<SourceSummary> failures = [.. content.Failures, .. content.Skipped];
         if (failures.Count == 0) return;
-        page.Raw("<section><h2>Not read, or not whole</h2>\n<table><caption>Each with its reason; all of them are in sources.csv.</caption>")
+        page.Raw("<section tabindex=\"0\" aria-label=\"Not read, or not whole\"><h2>Not read, or not whole</h2>\n<table><caption>Each with its reason; all of them are in sources.csv.</caption>")
             .Raw("<thead><tr><th scope=\"col\">source</th><th scope=\"col\" class=\"text\">what happened</th><th scope=\"col\" class=\"text\">reason</th></tr></thead><tbody>\n");
         foreach (SourceSummary line in failures)
         {

@@ -1,0 +1,29 @@
+namespace Tallybound.Cli.Tests.Browser;
+
+/// <summary>A run folder with its pages.</summary>
+internal sealed class ReportRun(string folder)
+{
+    /// <summary>A run of more pages than this is looked at in samples.</summary>
+    private const int AllPagesUpTo = 60;
+
+    /// <summary>The run folder.</summary>
+    public string Folder => folder;
+
+    /// <summary>The first page.</summary>
+    public string Index => Path.Combine(folder, "index.html");
+
+    /// <summary>Pages of single sources, in ordinal order; empty where the run has none.</summary>
+    public string[] SourcePages { get; } = Directory.Exists(Path.Combine(folder, "sources"))
+        ? [.. Directory.EnumerateFiles(Path.Combine(folder, "sources"), "*.html").Order(StringComparer.Ordinal)] : [];
+
+    /// <summary>The pages to look at: all of a small run; of a large one the index and the first, middle and last page of a source.</summary>
+    public string[] Pages => SourcePages.Length <= AllPagesUpTo
+        ? [Index, .. SourcePages]
+        : [Index, SourcePages[0], SourcePages[SourcePages.Length / 2], SourcePages[^1]];
+
+    /// <summary>The record beside the pages.</summary>
+    public RunRecordFile Record => RunRecordFile.In(folder);
+
+    /// <summary>Bytes that were counted.</summary>
+    public long Bytes { get; } = (long)RunRecordFile.In(folder).Corpus["bytes"]!;
+}

@@ -11,6 +11,8 @@ public sealed class HelpTests
     [InlineData("profile", "--help")]
     [InlineData("profile", "-h")]
     [InlineData("profile", "data", "--order", "1", "--help")]
+    [InlineData("render", "--help")]
+    [InlineData("render", "-h")]
     public void Help_fits_a_screen_shows_examples_and_goes_to_standard_output(params string[] arguments)
     {
         using var folder = new FreshFolder();
@@ -20,24 +22,36 @@ public sealed class HelpTests
         Assert.InRange(outcome.OutputLines.Length, 10, ScreenLines);
         Assert.All(outcome.OutputLines, line => Assert.InRange(line.Length, 0, ScreenColumns));
         Assert.Contains("Examples:", outcome.Output, StringComparison.Ordinal);
-        Assert.Contains("tallybound profile ", outcome.Output, StringComparison.Ordinal);
+        Assert.Contains($"tallybound {(arguments[0].StartsWith('-') ? "profile" : arguments[0])} ", outcome.Output, StringComparison.Ordinal);
         Assert.Empty(folder.Everything());
     }
 
-    [Fact]
-    public void Every_option_that_help_names_is_taken()
+    [Theory]
+    [InlineData("profile", 19)]
+    [InlineData("render", 2)]
+    public void Every_option_that_help_names_is_taken(string command, int count)
     {
         using var folder = new FreshFolder();
-        string help = BuiltProgram.Run(folder, "profile", "--help").Output;
+        string help = BuiltProgram.Run(folder, command, "--help").Output;
         string[] options = [.. help.Split([' ', ',', '\n', '[', ']'], StringSplitOptions.RemoveEmptyEntries)
             .Where(word => word.StartsWith("--", StringComparison.Ordinal) && word.Length > 2).Distinct(StringComparer.Ordinal)];
         foreach (string option in options)
         {
-            // Without an input each ends as a usage error of another kind than "not an option".
-            Outcome outcome = BuiltProgram.Run(folder, "profile", option);
+            // Without an argument each ends as a usage error of another kind than "not an option".
+            Outcome outcome = BuiltProgram.Run(folder, command, option);
+            Assert.Equal(2, outcome.ExitCode);
             Assert.DoesNotContain("is not an option", outcome.Error, StringComparison.Ordinal);
         }
-        Assert.Equal(19, options.Length);
+        Assert.Equal(count, options.Length);
+    }
+
+    [Fact]
+    public void The_programs_page_names_every_command_and_each_has_a_page()
+    {
+        using var folder = new FreshFolder();
+        string[] commands = [.. BuiltProgram.Run(folder, "--help").OutputLines.Where(line => line.StartsWith("  ", StringComparison.Ordinal) && char.IsAsciiLetterLower(line[2]) && !line.Contains("tallybound", StringComparison.Ordinal)).Select(line => line.Split(' ')[2])];
+        Assert.Equal(["profile", "render"], commands);
+        foreach (string command in commands) Assert.StartsWith($"Usage: tallybound {command} ", BuiltProgram.Run(folder, command, "--help").Output, StringComparison.Ordinal);
     }
 
     [Fact]

@@ -1,64 +1,73 @@
 using System.CommandLine;
 using System.CommandLine.Parsing;
+using Tallybound.Cli.Screen;
 using Tallybound.Profiling.Plan;
 
 namespace Tallybound.Cli.Options;
 
-/// <summary>The command <c>profile</c>: its options as typed, and what they mean.</summary>
-/// <remarks>Options are declared as text and read here, so that every error is one line of our own that says how to mend it.</remarks>
-internal sealed class ProfileCommand
+/// <summary>The command <c>profile</c>: profiles sources and writes a run folder.</summary>
+internal sealed class ProfileCommand : DeclaredCommand
 {
-    /// <summary>The command's name.</summary>
-    public const string Name = "profile";
-
     private const int LongestCode = 63;
     private const int LargestRadix = 16;
     private const int MostThreads = 1024;
     private const long LeastSegmentBytes = 4096;
 
-    private readonly Option<string[]> output = Text("--out");
-    private readonly Option<string[]> order = Text("--order");
-    private readonly Option<string[]> blockLength = Text("--block-length");
-    private readonly Option<string[]> lengthLimit = Text("--length-limit");
-    private readonly Option<string[]> radix = Text("--radix");
-    private readonly Option<string[]> view = Text("--view");
-    private readonly Option<string[]> include = Text("--include");
-    private readonly Option<string[]> exclude = Text("--exclude");
-    private readonly Option<string[]> threads = Text("--threads");
-    private readonly Option<string[]> memory = Text("--memory");
-    private readonly Option<string[]> segment = Text("--segment");
-    private readonly Option<string[]> seed = Text("--seed");
-    private readonly Option<bool> inside = Flag("--inside");
-    private readonly Option<string[]> insideRatio = Text("--inside-ratio");
-    private readonly Option<string[]> insideSize = Text("--inside-size");
-    private readonly Option<string[]> referee = Text("--referee");
-    private readonly Option<bool> noDigest = Flag("--no-digest");
-    private readonly Option<bool> keepTallies = Flag("--keep-tallies");
-    private readonly Option<bool> quiet = Flag("--quiet");
-    private readonly Option<string[]> logFormat = Text("--log-format");
-    private readonly Argument<string[]> inputs = new("INPUT") { Arity = ArgumentArity.ZeroOrMore };
+    private readonly Option<string[]> output;
+    private readonly Option<string[]> order;
+    private readonly Option<string[]> blockLength;
+    private readonly Option<string[]> lengthLimit;
+    private readonly Option<string[]> radix;
+    private readonly Option<string[]> view;
+    private readonly Option<string[]> include;
+    private readonly Option<string[]> exclude;
+    private readonly Option<string[]> threads;
+    private readonly Option<string[]> memory;
+    private readonly Option<string[]> segment;
+    private readonly Option<string[]> seed;
+    private readonly Option<bool> inside;
+    private readonly Option<string[]> insideRatio;
+    private readonly Option<string[]> insideSize;
+    private readonly Option<string[]> referee;
+    private readonly Option<bool> noDigest;
+    private readonly Option<bool> keepTallies;
+    private readonly Option<bool> quiet;
+    private readonly Option<string[]> logFormat;
 
     /// <summary>Declares the command.</summary>
     public ProfileCommand()
+        : base("profile", "INPUT", TypedValue.Path)
     {
-        Command = new Command(Name) { inputs };
-        foreach (Option option in (ReadOnlySpan<Option>)[
-            output, order, blockLength, lengthLimit, radix, view, include, exclude, threads, memory, segment, seed,
-            inside, insideRatio, insideSize, referee, noDigest, keepTallies, quiet, logFormat])
-            Command.Options.Add(option);
+        output = Text("--out", TypedValue.Path);
+        order = Text("--order", TypedValue.Number);
+        blockLength = Text("--block-length", TypedValue.Number);
+        lengthLimit = Text("--length-limit", TypedValue.Number);
+        radix = Text("--radix", TypedValue.Number);
+        view = Text("--view", TypedValue.SomeOf(ViewNames.All));
+        include = Text("--include", TypedValue.Path);
+        exclude = Text("--exclude", TypedValue.Path);
+        threads = Text("--threads", TypedValue.Number);
+        memory = Text("--memory", TypedValue.Number);
+        segment = Text("--segment", TypedValue.Number);
+        seed = Text("--seed", TypedValue.Number);
+        inside = Flag("--inside");
+        insideRatio = Text("--inside-ratio", TypedValue.Number);
+        insideSize = Text("--inside-size", TypedValue.Number);
+        referee = Text("--referee", TypedValue.OneOf("none"));
+        noDigest = Flag("--no-digest");
+        keepTallies = Flag("--keep-tallies");
+        quiet = Flag("--quiet");
+        logFormat = Text("--log-format", TypedValue.OneOf("text", "json"));
     }
 
-    /// <summary>The command as the parser knows it.</summary>
-    public Command Command { get; }
+    /// <inheritdoc/>
+    public override string Usage => "tallybound profile INPUT...";
 
-    /// <summary>The options that take no value.</summary>
-    public IEnumerable<Option> Flags => Command.Options.Where(option => option.Arity.MaximumNumberOfValues == 0);
+    /// <inheritdoc/>
+    public override string HelpPage => HelpText.Profile;
 
-    /// <summary>What was typed, read and checked.</summary>
-    /// <param name="result">The parsed command line.</param>
-    /// <param name="afterTerminator">How many arguments stand after <c>--</c>: those are inputs whatever they begin with.</param>
-    /// <exception cref="UsageException">Something is wrong with it.</exception>
-    public ProfileRequest Read(ParseResult result, int afterTerminator)
+    /// <inheritdoc/>
+    public override Request Read(ParseResult result, int afterTerminator)
     {
         List<string> sources = Inputs(result, afterTerminator);
         var parameters = new RunParameters { Inputs = sources, Include = Globs(result, include), Exclude = Globs(result, exclude) };
@@ -82,23 +91,15 @@ internal sealed class ProfileCommand
         parameters = parameters with { Inside = IsSet(result, inside), Digest = !IsSet(result, noDigest), KeepTallies = IsSet(result, keepTallies) };
         if (!parameters.Inside && (Value(result, insideRatio) ?? Value(result, insideSize)) is not null)
             throw new UsageException("--inside-ratio and --inside-size limit what --inside reads; add --inside, or leave them out");
-        string format = Value(result, logFormat) ?? "text";
-        if (format is not ("text" or "json")) throw new UsageException($"--log-format {format}: takes text or json{NearestName.Suggestion(format, ["text", "json"])}");
+        string format = Word(result, logFormat);
         if (Value(result, output) is "") throw new UsageException("--out '': takes the folder to write; for example --out reports/review");
         return new ProfileRequest(parameters, Value(result, output), IsSet(result, quiet), format == "json");
     }
 
     private List<string> Inputs(ParseResult result, int afterTerminator)
     {
-        IReadOnlyList<Token> tokens = result.GetResult(inputs)?.Tokens ?? [];
-        var sources = new List<string>(tokens.Count);
-        for (int i = 0; i < tokens.Count; i++)
-        {
-            string typed = tokens[i].Value;
-            if (typed.Length > 1 && typed[0] == '-' && i < tokens.Count - afterTerminator) throw CommandLineText.UnknownOption(typed, Command);
-            if (typed.Length == 0) throw new UsageException("INPUT '' is empty; name a file, a folder or - for standard input");
-            sources.Add(typed);
-        }
+        List<string> sources = Arguments(result, afterTerminator);
+        if (sources.Contains("")) throw new UsageException("INPUT '' is empty; name a file, a folder or - for standard input");
         if (sources.Count == 0) throw new UsageException("INPUT is missing; name a file, a folder or - for standard input, as in tallybound profile data/");
         return sources;
     }
@@ -110,18 +111,4 @@ internal sealed class ProfileCommand
             throw new UsageException($"{option.Name} is given without a value; for example {option.Name} '**/*.csv'");
         return [.. found.Tokens.Select(token => token.Value)];
     }
-
-    private static string? Value(ParseResult result, Option<string[]> option)
-    {
-        if (result.GetResult(option) is not { } found) return null;
-        if (found.IdentifierTokenCount > 1) throw new UsageException($"{option.Name} is given {found.IdentifierTokenCount} times; give it once");
-        if (found.Tokens.Count == 0) throw new UsageException($"{option.Name} is given without a value; see tallybound profile --help");
-        return found.Tokens[0].Value;
-    }
-
-    private static bool IsSet(ParseResult result, Option<bool> option) => result.GetResult(option) is { Implicit: false };
-
-    private static Option<string[]> Text(string name) => new(name) { Arity = ArgumentArity.ZeroOrMore, AllowMultipleArgumentsPerToken = false };
-
-    private static Option<bool> Flag(string name) => new(name) { Arity = ArgumentArity.Zero };
 }

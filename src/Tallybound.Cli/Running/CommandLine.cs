@@ -16,9 +16,9 @@ internal static class CommandLine
         try
         {
             var typed = new CommandLineText(arguments);
-            if (typed.HelpAsked)
+            if (typed.HelpAsked is { } page)
             {
-                StandardStreams.WriteOutput(typed.IsProfile ? HelpText.Profile : HelpText.Program);
+                StandardStreams.WriteOutput(page);
                 return ExitCode.Well;
             }
             if (typed.VersionAsked)
@@ -26,14 +26,20 @@ internal static class CommandLine
                 StandardStreams.WriteOutput($"tallybound {Version}\n");
                 return ExitCode.Well;
             }
-            using var invocation = new ProfileInvocation(typed.Profile());
-            return invocation.Run();
+            return Carry(typed.Request());
         }
         catch (UsageException e)
         {
             Complain(e.Message);
             return ExitCode.Usage;
         }
+    }
+
+    private static int Carry(Request request)
+    {
+        if (request is RenderRequest render) return RenderInvocation.Run(render);
+        using var invocation = new ProfileInvocation((ProfileRequest)request);
+        return invocation.Run();
     }
 
     /// <summary>Says what is wrong in exactly one line.</summary>

@@ -86,7 +86,7 @@ internal sealed class ProfileInvocation : IDisposable
         }
         catch (RunFolderTakenException e)
         {
-            throw new UsageException($"--out {path}: {Shown(e.TakenPath)} exists already; name another folder, or move that one away");
+            throw new UsageException($"--out {path}: {ShownPath.FromHere(e.TakenPath)} exists already; name another folder, or move that one away");
         }
     }
 
@@ -94,7 +94,7 @@ internal sealed class ProfileInvocation : IDisposable
     {
         screen.Begin(progress);
         using var log = new RunLog(Path.Combine(folder.WorkPath, "run.log"), request.JsonLog, screen.Show);
-        log.Write(new RunEvent(RunEventLevel.Information, "run-started", $"into {Shown(folder.WorkPath)}"));
+        log.Write(new RunEvent(RunEventLevel.Information, "run-started", $"into {ShownPath.FromHere(folder.WorkPath)}"));
         RunResult result;
         string summary;
         using (signals.Token.Register(() => log.Write(new RunEvent(RunEventLevel.Warning, "stop-asked", "finishing what was read; a second Ctrl-C ends at once"))))
@@ -103,7 +103,7 @@ internal sealed class ProfileInvocation : IDisposable
             using (result.Ledger)
             {
                 RunReport.Write(folder.WorkPath, result);
-                summary = RunSummary.Of(result, Shown(result.Complete ? folder.FinalPath : folder.WorkPath));
+                summary = RunSummary.Of(result, ShownPath.FromHere(result.Complete ? folder.FinalPath : folder.WorkPath));
             }
         }
         log.Write(new RunEvent(RunEventLevel.Information, result.Complete ? "run-finished" : "run-ended-early", Pace(result.Corpus.Bytes)));
@@ -120,12 +120,5 @@ internal sealed class ProfileInvocation : IDisposable
         double seconds = Stopwatch.GetElapsedTime(started).TotalSeconds;
         string text = $"{SizeText.Count(bytes)} bytes in {seconds.ToString("0.00", CultureInfo.InvariantCulture)} s";
         return seconds > 0 && bytes > 0 ? $"{text}, {SizeText.Bytes((long)(bytes / seconds))}/s" : text;
-    }
-
-    /// <summary>A path as one would type it from here.</summary>
-    private static string Shown(string path)
-    {
-        string relative = Path.GetRelativePath(Environment.CurrentDirectory, path);
-        return relative.StartsWith("..", StringComparison.Ordinal) ? path : relative;
     }
 }

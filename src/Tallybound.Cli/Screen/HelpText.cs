@@ -11,6 +11,7 @@ internal static class HelpText
         Usage: tallybound COMMAND [options]
 
           profile INPUT...   profile files, folders and streams, and write a run folder
+          render RUN         draw the report of a run folder again
 
           --help, -h         this page; tallybound COMMAND --help for a command's own
           --version          the program's version
@@ -19,9 +20,10 @@ internal static class HelpText
           tallybound profile /data/depot
           tallybound profile sensor.bin --view words-le,bytes
           zcat door.log.gz | tallybound profile - --out reports/door
+          tallybound render reports/door
 
         Exit codes: 0 well, 1 some sources failed, 2 the command line is wrong,
-                    3 the run could not be kept, 130 stopped by you.
+                    3 the run or report could not be kept, 130 stopped by you.
 
         """;
 
@@ -48,6 +50,27 @@ internal static class HelpText
           tallybound profile /data/depot --exclude '**/*.gz'
           tallybound profile sensor.bin --view words-le,bytes --radix 3
           zcat door.log.gz | tallybound profile - --out reports/door
+
+        """;
+
+    /// <summary>The page of <c>tallybound render --help</c>.</summary>
+    public const string Render = """
+        Usage: tallybound render RUN [options]
+        Draws the report of a run again, from its profile.json and nothing else: the
+        same profile.json gives the same index.html and pictures, byte for byte.
+        RUN is a run folder, NAME or NAME.partial, or the profile.json in it.
+
+          --pictures usual|all    pictures as files: of the corpus page and of the ten
+                                  heaviest sources, or of every page         [usual]
+          --quiet                 say nothing when all is well
+
+        Examples:
+          tallybound render reports/depot
+          tallybound render reports/depot.partial/profile.json
+          tallybound render reports/depot --pictures all
+
+        Exit codes: 0 well, 2 there is no such run, or its profile.json cannot be read,
+                    3 the report could not be kept.
 
         """;
 }

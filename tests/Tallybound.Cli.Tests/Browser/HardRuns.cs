@@ -37,7 +37,11 @@ public sealed class HardRuns : IDisposable
         return made[name] = Makers[name](folder);
     }
 
-    public void Dispose() => folders.ForEach(folder => folder.Dispose());
+    public void Dispose()
+    {
+        foreach (ReportRun run in made.Values) run.Dispose();
+        foreach (FreshFolder folder in folders) folder.Dispose();
+    }
 
     private static ReportRun Demo(FreshFolder folder)
     {

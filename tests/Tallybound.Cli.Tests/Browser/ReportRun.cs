@@ -1,10 +1,14 @@
+using System.Text.Json;
+
 namespace Tallybound.Cli.Tests.Browser;
 
 /// <summary>A run folder with its pages.</summary>
-internal sealed class ReportRun(string folder)
+internal sealed class ReportRun(string folder) : IDisposable
 {
     /// <summary>A run of more pages than this is looked at in samples.</summary>
     private const int AllPagesUpTo = 60;
+
+    private readonly Lazy<JsonDocument> record = new(() => JsonDocument.Parse(File.ReadAllBytes(Path.Combine(folder, "profile.json"))));
 
     /// <summary>The run folder.</summary>
     public string Folder => folder;
@@ -22,8 +26,16 @@ internal sealed class ReportRun(string folder)
         : [Index, SourcePages[0], SourcePages[SourcePages.Length / 2], SourcePages[^1]];
 
     /// <summary>The record beside the pages.</summary>
-    public RunRecordFile Record => RunRecordFile.In(folder);
+    public JsonElement Record => record.Value.RootElement;
 
     /// <summary>Bytes that were counted.</summary>
-    public long Bytes { get; } = (long)RunRecordFile.In(folder).Corpus["bytes"]!;
+    public long Bytes => Record.GetProperty("corpus").GetProperty("bytes").GetInt64();
+
+    /// <summary>Names of the sources as the record has them.</summary>
+    public string[] Names => [.. Record.GetProperty("sources").EnumerateArray().Select(source => source.GetProperty("name").GetString()!)];
+
+    public void Dispose()
+    {
+        if (record.IsValueCreated) record.Value.Dispose();
+    }
 }

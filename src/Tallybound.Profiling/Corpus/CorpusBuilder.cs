@@ -1,3 +1,4 @@
+using Tallybound.Profiling.Findings;
 using Tallybound.Profiling.Ledger;
 using Tallybound.Profiling.Records;
 
@@ -20,6 +21,7 @@ internal sealed class CorpusBuilder
     private readonly long[] adaptiveBits = new long[AdaptiveOrders];
     private readonly bool[] anyAdaptive = new bool[AdaptiveOrders];
     private long order0BoundBits;
+    private readonly CorpusFindings findings = new();
     private long empty;
 
     /// <summary>Adds one record. May be called from any thread.</summary>
@@ -32,6 +34,7 @@ internal sealed class CorpusBuilder
             bytes += profile.Bytes ?? 0;
             if (profile.Bytes == 0) empty++;
             AddView(views[0], profile.Bytes ?? 0);
+            findings.Add(profile);
         }
     }
 
@@ -59,6 +62,12 @@ internal sealed class CorpusBuilder
             Quantiles = Quantiles(),
             Duplicates = duplicates.Count == 0 ? null : duplicates,
         };
+    }
+
+    /// <summary>What the figures say of the whole, by bytes at stake, then by id; of a single source, its own findings. Empty when nothing fires.</summary>
+    public IReadOnlyList<Finding> Findings()
+    {
+        lock (gate) return findings.Finish();
     }
 
     private long? Adaptive(int order) => anyAdaptive[order] ? adaptiveBits[order] : null;

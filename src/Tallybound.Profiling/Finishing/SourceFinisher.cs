@@ -1,3 +1,4 @@
+using Tallybound.Profiling.Findings;
 using Tallybound.Profiling.Plan;
 using Tallybound.Profiling.Records;
 using Tallybound.Profiling.Run;
@@ -47,6 +48,7 @@ internal sealed class SourceFinisher(RunParameters parameters)
             Sha256Pieces = digest is { OfPieces: true } pieces ? pieces.Hexadecimal : null,
             Views = profiles,
         };
+        if (FindingRules.Of(profile) is { } findings) profile = profile with { Findings = findings };
         return (profile, keepCounts ? new DrawingCounts(drawings) : null);
     }
 

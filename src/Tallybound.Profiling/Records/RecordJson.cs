@@ -13,6 +13,7 @@ namespace Tallybound.Profiling.Records;
 [JsonSerializable(typeof(RunRecord))]
 [JsonSerializable(typeof(SymbolSeries))]
 [JsonSerializable(typeof(DrawingCounts))]
+[JsonSerializable(typeof(IReadOnlyList<Finding>))]
 public sealed partial class RecordJson : JsonSerializerContext
 {
     /// <summary>The bytes of one source's record, as the ledger and <c>profile.json</c> hold them.</summary>

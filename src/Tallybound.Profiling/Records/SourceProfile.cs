@@ -35,6 +35,9 @@ public sealed record SourceProfile
 
     /// <summary>One entry a view, in the order asked for. Null when nothing was read.</summary>
     public IReadOnlyList<ViewProfile>? Views { get; init; }
+
+    /// <summary>What the figures of the first view say, the most bytes at stake first. Null when they say nothing that a rule knows.</summary>
+    public IReadOnlyList<Finding>? Findings { get; init; }
 }
 
 /// <summary>Where a source's bytes came from.</summary>

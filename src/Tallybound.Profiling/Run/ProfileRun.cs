@@ -11,10 +11,11 @@ namespace Tallybound.Profiling.Run;
 /// <summary>What a run left: the records are in the ledger, the whole is here.</summary>
 /// <param name="Complete">False when the run was stopped before every source had its turn.</param>
 /// <param name="Corpus">The corpus roll-up.</param>
+/// <param name="Findings">What the figures say of the whole, by bytes at stake; empty when no rule fires.</param>
 /// <param name="Run">Provenance.</param>
 /// <param name="Ledger">The open ledger, from which reports stream; the caller disposes of it.</param>
 /// <param name="KeptTallies">The counts themselves, source by source, to be read once; null unless they were to be kept.</param>
-public sealed record RunResult(bool Complete, CorpusProfile Corpus, RunRecord Run, RunLedger Ledger, IEnumerable<TallyRow>? KeptTallies);
+public sealed record RunResult(bool Complete, CorpusProfile Corpus, IReadOnlyList<Finding> Findings, RunRecord Run, RunLedger Ledger, IEnumerable<TallyRow>? KeptTallies);
 
 /// <summary>Carries a frozen plan through: units, merge, finish, ledger, roll-up.</summary>
 public static class ProfileRun
@@ -40,7 +41,7 @@ public static class ProfileRun
             Work(plan, progress, keeper, records, stop);
             ledger.Settle();
             bool complete = !records.AnyStopped;
-            return new RunResult(complete, corpus.Finish(ledger, plan.ExcludedByRule), Provenance(plan, started, complete), ledger, keeper?.Rows());
+            return new RunResult(complete, corpus.Finish(ledger, plan.ExcludedByRule), corpus.Findings(), Provenance(plan, started, complete), ledger, keeper?.Rows());
         }
         catch
         {

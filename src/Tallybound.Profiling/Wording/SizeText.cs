@@ -32,6 +32,13 @@ public static class SizeText
     public static string Saving(long rawBytes, long codedBytes) =>
         rawBytes == 0 ? "" : (100.0 * (rawBytes - codedBytes) / rawBytes).ToString("0.0", CultureInfo.InvariantCulture) + " %";
 
+    /// <summary>A share of 0 to 1 in per cent to one decimal: <c>56.7 %</c>. Only the whole is <c>100.0 %</c>.</summary>
+    public static string Percent(double share)
+    {
+        double percent = Math.Round(100 * share, 1);
+        return (percent >= 100 && share < 1 ? 99.9 : percent).ToString("0.0", CultureInfo.InvariantCulture) + " %";
+    }
+
     /// <summary>Rate to four decimals.</summary>
     public static string Rate(double bitsPerSymbol) => bitsPerSymbol.ToString("0.0000", CultureInfo.InvariantCulture);
 

@@ -42,8 +42,8 @@ internal static class ProfileDocument
         JsonSerializer.Serialize(writer, result.Run, RecordJson.Default.RunRecord);
         writer.WritePropertyName("corpus");
         JsonSerializer.Serialize(writer, result.Corpus, RecordJson.Default.CorpusProfile);
-        writer.WriteStartArray("findings");
-        writer.WriteEndArray();
+        writer.WritePropertyName("findings");
+        JsonSerializer.Serialize(writer, result.Findings, RecordJson.Default.IReadOnlyListFinding);
         writer.WriteStartArray("sources");
         WriteSources(writer, result);
         writer.WriteEndArray();

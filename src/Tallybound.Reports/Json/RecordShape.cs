@@ -13,6 +13,18 @@ internal static class RecordShape
         if (profile.Bytes < 0) return "bytes is below 0";
         foreach (ViewProfile view in profile.Views ?? [])
             if (Fault(view) is { } fault) return $"view {view.View}: {fault}";
+        return Fault(profile.Findings ?? []);
+    }
+
+    /// <summary>What is wrong with findings; null: nothing is.</summary>
+    public static string? Fault(IReadOnlyList<Finding> findings)
+    {
+        foreach (Finding finding in findings)
+        {
+            if (finding.BytesAtStake < 0) return $"finding {finding.Id}: bytesAtStake is below 0";
+            if (finding.BytesAtStakeInterval is { Length: not PairLength }) return $"finding {finding.Id}: bytesAtStakeInterval holds no pair";
+            if (finding.Evidence.Count == 0) return $"finding {finding.Id}: evidence is empty";
+        }
         return null;
     }
 

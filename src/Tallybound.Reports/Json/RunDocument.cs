@@ -99,6 +99,7 @@ internal sealed class RunDocument
                 break;
             case "findings":
                 findings = Value<IReadOnlyList<Finding>>();
+                if (RecordShape.Fault(findings) is { } fault) throw NoRecord($"{place}, {fault}:", null);
                 break;
             case "sources":
                 ReadSources();

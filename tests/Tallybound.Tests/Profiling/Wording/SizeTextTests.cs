@@ -25,4 +25,11 @@ public sealed class SizeTextTests
         Assert.Equal("-10.0 %", SizeText.Saving(100, 110));
         Assert.Equal("", SizeText.Ratio(0, 0));
     }
+
+    [Theory]
+    [InlineData(0, "0.0 %")]
+    [InlineData(0.2549, "25.5 %")]
+    [InlineData(0.99999, "99.9 %")]
+    [InlineData(1, "100.0 %")]
+    public void A_share_has_one_decimal_and_only_the_whole_is_100(double share, string expected) => Assert.Equal(expected, SizeText.Percent(share));
 }

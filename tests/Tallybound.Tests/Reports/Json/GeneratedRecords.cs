@@ -26,8 +26,16 @@ internal sealed class GeneratedRecords(int seed)
             Sha256 = Chance(0.3) ? "00ff" : null,
             Sha256Pieces = Chance(0.2) ? "ff00" : null,
             Views = read ? Many(1, 3, View) : null,
+            Findings = read && number % 3 == 0 ? [Finding("of-a-source"), Finding("another") with { BytesAtStakeInterval = null, Excludes = null }] : null,
         };
     }
+
+    /// <summary>A finding with every member that a source's list has.</summary>
+    public static Finding Finding(string id) => new()
+    {
+        Id = id, Claim = "A claim.", BytesAtStake = 7, BytesAtStakeInterval = [5, 9], Against = "nothing", Evidence = [new FindingEvidence("rate", 1.5, "bit/symbol")],
+        HoldsUnless = "It is not so.", Excludes = ["another"],
+    };
 
     /// <summary>Counts for the drawings of a source, for the views it has.</summary>
     public DrawingCounts Counts(SourceProfile profile) => new([.. profile.Views!.Select(_ => new DrawingCountsOfView(

@@ -19,7 +19,7 @@ internal sealed class WrittenRun : IDisposable
         Ledger = RunLedger.Create(Path.Combine(folder, "ledger.sqlite"), [],
             sources.Select((source, id) => new PlannedSource(id, source.Name, source.Kind, null, source.Bytes, null)));
         for (int id = 0; id < sources.Count; id++) Ledger.Finish(id, sources[id], sources[id].Views is null ? null : records.Counts(sources[id]));
-        Result = new RunResult(true, records.Corpus(), records.Run(), Ledger, null);
+        Result = new RunResult(true, records.Corpus(), [GeneratedRecords.Finding("of-the-run") with { Sources = 2, HeaviestSource = "second" }], records.Run(), Ledger, null);
         Document = Path.Combine(folder, "profile.json");
         ProfileDocument.Write(Document, Result);
     }

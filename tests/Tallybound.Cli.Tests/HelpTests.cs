@@ -13,6 +13,7 @@ public sealed class HelpTests
     [InlineData("profile", "data", "--order", "1", "--help")]
     [InlineData("render", "--help")]
     [InlineData("render", "-h")]
+    [InlineData("completion", "--help")]
     public void Help_fits_a_screen_shows_examples_and_goes_to_standard_output(params string[] arguments)
     {
         using var folder = new FreshFolder();
@@ -50,7 +51,7 @@ public sealed class HelpTests
     {
         using var folder = new FreshFolder();
         string[] commands = [.. BuiltProgram.Run(folder, "--help").OutputLines.Where(line => line.StartsWith("  ", StringComparison.Ordinal) && char.IsAsciiLetterLower(line[2]) && !line.Contains("tallybound", StringComparison.Ordinal)).Select(line => line.Split(' ')[2])];
-        Assert.Equal(["profile", "render"], commands);
+        Assert.Equal(["profile", "render", "completion"], commands);
         foreach (string command in commands) Assert.StartsWith($"Usage: tallybound {command} ", BuiltProgram.Run(folder, command, "--help").Output, StringComparison.Ordinal);
     }
 

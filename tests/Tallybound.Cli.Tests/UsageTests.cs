@@ -63,6 +63,12 @@ public sealed class UsageTests
         { ["render", "x", "--pictures"], "--pictures is given without a value; see tallybound render --help" },
         { ["render", "x", "--pictures", "all", "--pictures", "all"], "given 2 times" },
         { ["render", "x", "--quiet=yes"], "--quiet takes no value" },
+        { ["completions", "bash"], "did you mean completion?" },
+        { ["completion"], "SHELL is missing; takes bash, zsh or powershell" },
+        { ["completion", "fish"], "SHELL fish: takes bash, zsh or powershell" },
+        { ["completion", "bahs"], "did you mean bash?" },
+        { ["completion", "bash", "zsh"], "SHELL zsh is one too many" },
+        { ["completion", "bash", "--quiet"], "--quiet is not an option of completion" },
         { ["profile", "x", "--view", "two\nlines"], "there is no view" },
         { ["profile", "no\nsuch\u001b[31mfile"], "there is no such file or folder" },
     };

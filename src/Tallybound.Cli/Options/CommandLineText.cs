@@ -30,7 +30,7 @@ internal sealed class CommandLineText
     }
 
     /// <summary>The commands there are, in the order of help pages.</summary>
-    public IReadOnlyList<DeclaredCommand> Commands { get; } = [new ProfileCommand(), new RenderCommand()];
+    public IReadOnlyList<DeclaredCommand> Commands { get; } = [new ProfileCommand(), new RenderCommand(), new CompletionCommand()];
 
     /// <summary>True when the version is asked for.</summary>
     public bool VersionAsked => result.GetResult(version) is { Implicit: false };

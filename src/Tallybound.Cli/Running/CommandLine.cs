@@ -1,4 +1,5 @@
 using System.Reflection;
+using Tallybound.Cli.Completion;
 using Tallybound.Cli.Options;
 using Tallybound.Cli.Screen;
 using Tallybound.Sources;
@@ -26,7 +27,7 @@ internal static class CommandLine
                 StandardStreams.WriteOutput($"tallybound {Version}\n");
                 return ExitCode.Well;
             }
-            return Carry(typed.Request());
+            return Carry(typed.Request(), typed.Commands);
         }
         catch (UsageException e)
         {
@@ -35,11 +36,18 @@ internal static class CommandLine
         }
     }
 
-    private static int Carry(Request request)
+    private static int Carry(Request request, IReadOnlyList<DeclaredCommand> commands)
     {
-        if (request is RenderRequest render) return RenderInvocation.Run(render);
-        using var invocation = new ProfileInvocation((ProfileRequest)request);
-        return invocation.Run();
+        switch (request)
+        {
+            case CompletionRequest completion:
+                StandardStreams.WriteOutput(CompletionScript.For(completion.Shell, commands));
+                return ExitCode.Well;
+            case RenderRequest render:
+                return RenderInvocation.Run(render);
+            default:
+                using (var invocation = new ProfileInvocation((ProfileRequest)request)) return invocation.Run();
+        }
     }
 
     /// <summary>Says what is wrong in exactly one line.</summary>

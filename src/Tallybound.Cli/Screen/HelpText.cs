@@ -12,6 +12,7 @@ internal static class HelpText
 
           profile INPUT...   profile files, folders and streams, and write a run folder
           render RUN         draw the report of a run folder again
+          completion SHELL   print what lets bash, zsh or PowerShell complete commands
 
           --help, -h         this page; tallybound COMMAND --help for a command's own
           --version          the program's version
@@ -71,6 +72,27 @@ internal static class HelpText
 
         Exit codes: 0 well, 2 there is no such run, or its profile.json cannot be read,
                     3 the report could not be kept.
+
+        """;
+
+    /// <summary>The page of <c>tallybound completion --help</c>.</summary>
+    public const string Completion = """
+        Usage: tallybound completion bash|zsh|powershell
+        Prints a script by which the shell completes commands, options, their values and
+        names of files. The shell runs the script alone, not this program.
+
+        For one session, or at the end of the shell's own start file:
+          bash         eval "$(tallybound completion bash)"
+          zsh          eval "$(tallybound completion zsh)"
+          powershell   tallybound completion powershell | Out-String | Invoke-Expression
+
+        Kept as a file, so that no shell starts later for it; DIR is a folder in fpath:
+          bash         ~/.local/share/bash-completion/completions/tallybound
+          zsh          DIR/_tallybound
+
+        Examples:
+          eval "$(tallybound completion bash)"
+          tallybound completion zsh > ~/.zfunc/_tallybound
 
         """;
 }

@@ -39,6 +39,22 @@ public sealed partial class ReadmeTests
         Assert.All(options, option => Assert.Contains(option, program, StringComparison.Ordinal));
     }
 
+    [Fact]
+    public void The_readme_shows_every_command_of_the_program_and_no_other()
+    {
+        string program = string.Concat(Checkout.Files().Where(file => file.StartsWith("src/Tallybound.Cli/Options/", StringComparison.Ordinal)).Select(file => File.ReadAllText(Checkout.PathOf(file))));
+        string[] declared = [.. DeclaredCommand().Matches(program).Select(match => match.Groups["name"].Value).Order(StringComparer.Ordinal)];
+        string[] shown = [.. ShownCommand().Matches(Readme).Select(match => match.Groups["name"].Value).Distinct().Order(StringComparer.Ordinal)];
+        Assert.Equal(["completion", "profile", "render"], declared);
+        Assert.Equal(declared, shown);
+    }
+
+    [GeneratedRegex(": base\\(\"(?<name>[a-z]+)\"", RegexOptions.ExplicitCapture, matchTimeoutMilliseconds: 5000)]
+    private static partial Regex DeclaredCommand();
+
+    [GeneratedRegex("tallybound (?<name>[a-z]+)", RegexOptions.ExplicitCapture, matchTimeoutMilliseconds: 5000)]
+    private static partial Regex ShownCommand();
+
     [GeneratedRegex("^dotnet .*$", RegexOptions.Multiline | RegexOptions.ExplicitCapture, matchTimeoutMilliseconds: 5000)]
     private static partial Regex DotnetCommand();
 

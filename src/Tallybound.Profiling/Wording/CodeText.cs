@@ -6,7 +6,7 @@ public static class CodeText
     /// <summary>The key of <see cref="Records.CorpusProfile.Totals"/> in words, such as "Huffman, codes of at most 12 bits".</summary>
     public static string Of(string key)
     {
-        if (key.StartsWith("huffman-limited-", StringComparison.Ordinal)) return $"Huffman, codes of at most {key["huffman-limited-".Length..]} bits";
+        if (key.StartsWith("huffman-limited-", StringComparison.Ordinal)) return $"Huffman, at most {key["huffman-limited-".Length..]} bits";
         if (key.StartsWith("block-huffman-", StringComparison.Ordinal)) return $"Huffman of {key["block-huffman-".Length..]}-symbol blocks";
         return key switch
         {
@@ -14,11 +14,18 @@ public static class CodeText
             "stored" => "stored",
             "fixed" => "fixed-length codes",
             "huffman" => "Huffman",
-            "context-huffman" => "Huffman, one table a previous symbol",
-            "tans" => "tANS, priced from counts",
-            "range" => "range coder, priced from counts",
+            "context-huffman" => "Huffman per previous symbol",
+            "tans" => "tANS",
+            "range" => "range coding",
             "bestPerSource" => "the best code of each source",
             _ => key,
         };
+    }
+
+    /// <summary>The same as the first words of a sentence.</summary>
+    public static string AtTheStart(string key)
+    {
+        string words = Of(key);
+        return key == "tans" ? words : char.ToUpperInvariant(words[0]) + words[1..];
     }
 }

@@ -77,7 +77,7 @@ internal sealed class BoundStrip : IPanel, IPlottable
             bool left = x - width > rp.FigureRect.Left + PictureFrame.Margin;
             bool right = x + width < rp.FigureRect.Right - PictureFrame.Margin;
             float from = left || !right ? Math.Max(rp.FigureRect.Left + PictureFrame.Margin, x - width) : x + 6;
-            Drawing.FillRectangle(rp.Canvas, new PixelRect(from - 2, from + width - 10, y + Line / 2 - 2, y - Line / 2 + 2), Tones.Ground);
+            Drawing.FillRectangle(rp.Canvas, new PixelRect(from - 2, from + width - 10, y + Line / 2 - 2, y - Line / 2 + 2), rp.Paint, new FillStyle { Color = Tones.Ground });
             PictureText.Draw(rp, ordered[i].Label, from, y, Alignment.MiddleLeft, Tones.Dark);
         }
     }

@@ -1,7 +1,7 @@
 namespace Tallybound.Reports.Charts.Frame;
 
 /// <summary>A chart, or the sentence that stands in its place where it would say nothing.</summary>
-internal sealed record Chart
+public sealed record Chart
 {
     private Chart(Picture? picture, string? sentence) => (Picture, Sentence) = (picture, sentence);
 

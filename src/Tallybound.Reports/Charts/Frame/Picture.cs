@@ -3,7 +3,7 @@ using ScottPlot;
 namespace Tallybound.Reports.Charts.Frame;
 
 /// <summary>One chart, ready to be drawn: its message, what it shows, and the plot.</summary>
-internal sealed class Picture : IDisposable
+public sealed class Picture : IDisposable
 {
     /// <summary>Width of a picture in pixels at 1×.</summary>
     public const int UsualWidth = 760;

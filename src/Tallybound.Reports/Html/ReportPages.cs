@@ -1,16 +1,75 @@
+using Tallybound.Reports.Charts;
+using Tallybound.Reports.Charts.Frame;
+using Tallybound.Reports.Files;
+using Tallybound.Reports.Html.Corpus;
+using Tallybound.Reports.Html.Pages;
+using Tallybound.Reports.Html.Sections;
 using Tallybound.Reports.Json;
 using Tallybound.Reports.Run;
 
 namespace Tallybound.Reports.Html;
 
-/// <summary>Draws a report's pages.</summary>
+/// <summary>Draws a report: <c>index.html</c>, a page for each heavy source, and pictures for slides.</summary>
 internal static class ReportPages
 {
-    /// <summary>Writes <c>index.html</c>.</summary>
+    private const int SourcesWithPictures = 10;
+
+    /// <summary>Draws it into a run folder.</summary>
     /// <param name="folder">The run folder.</param>
-    /// <param name="content">What is drawn.</param>
-    /// <param name="pictures">Which pictures are written as files; the index page has none.</param>
+    /// <param name="content">What it is drawn from.</param>
+    /// <param name="pictures">Which pictures are written as files.</param>
     /// <exception cref="IOException">A file cannot be written.</exception>
-    public static void Draw(string folder, ReportContent content, PictureChoice pictures) =>
-        IndexPage.Write(Path.Combine(folder, RunReport.PageName), content);
+    public static void Draw(string folder, ReportContent content, PictureChoice pictures)
+    {
+        string charts = Path.Combine(folder, "charts"), sources = Path.Combine(folder, "sources");
+        Directory.CreateDirectory(charts);
+        Directory.CreateDirectory(sources);
+        using var renderer = new PageRenderer();
+        DrawCorpus(folder, charts, content, renderer);
+        foreach (DrawnSource source in content.Drawn)
+            DrawSource(folder, charts, content, source, renderer, pictures == PictureChoice.All || source.Number <= SourcesWithPictures);
+    }
+
+    private static void DrawCorpus(string folder, string charts, ReportContent content, PageRenderer renderer)
+    {
+        Chart front = CorpusSizesChart.Of(content.Corpus);
+        IReadOnlyList<Section> sections = CorpusSections.Of(content);
+        WritePictures(charts, "corpus", [front, .. sections.SelectMany(section => section.Charts)]);
+        renderer.Write<CorpusPage>(Path.Combine(folder, "index.html"), new()
+        {
+            [nameof(CorpusPage.Content)] = content,
+            [nameof(CorpusPage.Front)] = front,
+            [nameof(CorpusPage.Sections)] = sections,
+        });
+        Release(sections);
+        front.Picture?.Dispose();
+    }
+
+    private static void DrawSource(string folder, string charts, ReportContent content, DrawnSource source, PageRenderer renderer, bool writePictures)
+    {
+        var views = SourceSections.Of(source);
+        renderer.Write<SourcePage>(Path.Combine(folder, SourceFile.Of(source)), new()
+        {
+            [nameof(SourcePage.Content)] = content,
+            [nameof(SourcePage.Source)] = source,
+            [nameof(SourcePage.Views)] = views,
+        });
+        for (int i = 0; i < views.Count; i++)
+        {
+            string stem = i == 0 ? SourceFile.Stem(source) : $"{SourceFile.Stem(source)}-{views[i].View.View}";
+            if (writePictures) WritePictures(charts, stem, [.. views[i].Sections.SelectMany(section => section.Charts)]);
+            Release(views[i].Sections);
+        }
+    }
+
+    private static void WritePictures(string charts, string stem, IReadOnlyList<Chart> drawn)
+    {
+        foreach (Chart chart in drawn)
+            if (chart.Picture is { } picture) WholeFile.Write(Path.Combine(charts, $"{stem}-{picture.Slug}.png"), stream => stream.Write(picture.ToPng()));
+    }
+
+    private static void Release(IReadOnlyList<Section> sections)
+    {
+        foreach (Section section in sections) foreach (Chart chart in section.Charts) chart.Picture?.Dispose();
+    }
 }

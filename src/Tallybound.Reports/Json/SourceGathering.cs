@@ -11,10 +11,11 @@ internal sealed class SourceGathering
     /// <summary>Failed or partial sources listed at most, and skipped ones.</summary>
     public const int MostNotWhole = 200;
 
-    private readonly HeaviestKept<SourceProfile> drawn = new(ProfileDocument.SourcesWithPage);
+    private readonly HeaviestKept<(SourceProfile Profile, long Place)> drawn = new(ProfileDocument.SourcesWithPage);
     private readonly HeaviestKept<SourceSummary> listed = new(MostListed);
     private readonly List<SourceSummary> failures = [];
     private readonly List<SourceSummary> skipped = [];
+    private long place;
 
     /// <summary>Failed and partial ones so far, in the order they came.</summary>
     public IReadOnlyList<SourceSummary> Failures => failures;
@@ -25,17 +26,18 @@ internal sealed class SourceGathering
     /// <summary>Takes the next source.</summary>
     public void Add(SourceProfile profile)
     {
+        long here = place++;
         SourceSummary line = SourceSummary.Of(profile);
         if (profile.Status is SourceStatus.Failed or SourceStatus.Partial && failures.Count < MostNotWhole) failures.Add(line);
         if (profile.Status is SourceStatus.Skipped && skipped.Count < MostNotWhole) skipped.Add(line);
         if (profile is not { Bytes: { } bytes, Views.Count: > 0 }) return;
-        drawn.Add(bytes, profile);
+        drawn.Add(bytes, (profile, here));
         listed.Add(bytes, line);
     }
 
     /// <summary>The heaviest ones, heaviest first; asked for once, when all are in.</summary>
     public IReadOnlyList<DrawnSource> TakeDrawn() =>
-        [.. drawn.Take().Select((profile, index) => new DrawnSource(index + 1, profile, profile.Views!.Any(view => view.PairCounts is not null)))];
+        [.. drawn.Take().Select((kept, index) => new DrawnSource(index + 1, kept.Place, kept.Profile, kept.Profile.Views!.Any(view => view.PairCounts is not null)))];
 
     /// <summary>Lines of the heaviest ones, heaviest first; asked for once, when all are in.</summary>
     public IReadOnlyList<SourceSummary> TakeListed() => listed.Take();

@@ -16,12 +16,4 @@ public sealed class VisibleTextTests
     /// <summary>Apart from the others: an attribute cannot hold half a surrogate pair.</summary>
     [Fact]
     public void Half_a_surrogate_pair_becomes_visible() => Assert.Equal("a\\u{d800}b", VisibleText.Of("a" + (char)0xD800 + "b"));
-
-    [Fact]
-    public void Markup_in_a_name_stays_text()
-    {
-        string page = new HtmlPage().Text("<script>alert('x')</script>&\"").ToString();
-        Assert.DoesNotContain("<", page, StringComparison.Ordinal);
-        Assert.DoesNotContain("\"", page, StringComparison.Ordinal);
-    }
 }

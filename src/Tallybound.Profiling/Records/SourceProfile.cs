@@ -33,9 +33,6 @@ public sealed record SourceProfile
     /// <summary>SHA-256 of the SHA-256s of the consecutive 64 MiB pieces; for sources above 64 MiB.</summary>
     public string? Sha256Pieces { get; init; }
 
-    /// <summary>What the figures say of this source, by bytes at stake. Null when no rule fires.</summary>
-    public IReadOnlyList<Finding>? Findings { get; init; }
-
     /// <summary>One entry a view, in the order asked for. Null when nothing was read.</summary>
     public IReadOnlyList<ViewProfile>? Views { get; init; }
 

@@ -32,9 +32,8 @@ internal static class RecordForm
 /// <param name="Version">Its version.</param>
 internal sealed record ToolRecord(string Version);
 
-/// <summary>What stands in a document beside the records of the run, the corpus and the sources.</summary>
+/// <summary>What stands in a document beside records.</summary>
 [JsonSourceGenerationOptions(PropertyNamingPolicy = JsonKnownNamingPolicy.CamelCase)]
 [JsonSerializable(typeof(string))]
 [JsonSerializable(typeof(ToolRecord))]
-[JsonSerializable(typeof(IReadOnlyList<Finding>))]
 internal sealed partial class HeadJson : JsonSerializerContext;

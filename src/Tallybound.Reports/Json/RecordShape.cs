@@ -1,3 +1,4 @@
+using System.Globalization;
 using Tallybound.Profiling.Records;
 
 namespace Tallybound.Reports.Json;
@@ -33,12 +34,22 @@ internal static class RecordShape
         if (view.Orders.Any(order => order.EntropyBitsPerSymbolInterval is { Length: not PairLength })) return "entropyBitsPerSymbolInterval holds no pair";
         if (view.TableBlocks is { } blocks && blocks.Any(block => block.TotalBitsInterval is { Length: not PairLength })) return "totalBitsInterval holds no pair";
         if (view.Segments is { } segments && !SameLength(segments)) return "the lists of segments differ in length";
-        if (view.PairCounts is { } contexts && contexts.Any(context => !int.TryParse(context.Key, out _) || context.Value.Any(pair => pair.Length != PairLength)))
-            return "pairCounts holds no pairs under a context";
+        if (view.SymbolCounts is { } counts && !InAlphabet(counts, view.AlphabetSize)) return "symbolCounts holds symbols outside the alphabet";
+        if (view.CodeLengths is { } lengths && !InAlphabet(lengths, view.AlphabetSize)) return "codeLengths holds symbols outside the alphabet";
+        if (view.PairCounts is { } contexts && !contexts.All(context => InAlphabet(context.Key, context.Value, view.AlphabetSize))) return "pairCounts holds no pairs of the alphabet's symbols";
         return null;
     }
 
     private static bool SameLength(SegmentSeries segments) =>
         segments.SourceTableBits.Count == segments.OwnTableBits.Count && segments.PreviousTableBits.Count == segments.OwnTableBits.Count &&
         segments.DivergenceBits.Count == segments.OwnTableBits.Count;
+
+    private static bool InAlphabet(SymbolSeries series, long size) =>
+        (series.Dense?.Length ?? 0) <= size && (series.Pairs ?? []).All(pair => InAlphabet(pair[0], size));
+
+    private static bool InAlphabet(string context, IReadOnlyList<long[]> counts, long size) =>
+        long.TryParse(context, NumberStyles.None, CultureInfo.InvariantCulture, out long before) && InAlphabet(before, size) &&
+        counts.All(pair => pair.Length == PairLength && InAlphabet(pair[0], size));
+
+    private static bool InAlphabet(long symbol, long size) => symbol >= 0 && symbol < size;
 }

@@ -1,4 +1,5 @@
 using System.Text;
+using Tallybound.Profiling.Records;
 using Tallybound.Reports.Json;
 using Xunit;
 
@@ -11,7 +12,9 @@ public sealed class DamagedDocumentTests : IDisposable
     public DamagedDocumentTests()
     {
         var records = new GeneratedRecords(21);
-        run = new WrittenRun([.. Enumerable.Range(0, 3).Select(records.Source)], records);
+        SourceProfile[] generated = [.. Enumerable.Range(0, 60).Select(records.Source)];
+        // Small, since it is read once for each of its bytes: the shortest record that was read, and one that was not.
+        run = new WrittenRun([generated.Where(source => source.Views is not null).MinBy(source => RecordJson.ToUtf8(source).Length)!, generated.First(source => source.Views is null)], records);
     }
 
     public void Dispose() => run.Dispose();
@@ -36,7 +39,7 @@ public sealed class DamagedDocumentTests : IDisposable
             Assert.Contains("is cut off", Refused(whole[..length], block: length % 3 == 0 ? 1 : 997).Message, StringComparison.Ordinal);
             cuts++;
         }
-        Assert.InRange(cuts, 3000, int.MaxValue);
+        Assert.InRange(cuts, 1500, int.MaxValue);
         File.WriteAllBytes(run.Document, whole[..^1]);
         Assert.NotNull(RunDocument.Read(run.Document));
     }
@@ -46,10 +49,11 @@ public sealed class DamagedDocumentTests : IDisposable
     {
         byte[] whole = File.ReadAllBytes(run.Document);
         int refused = 0;
-        for (int place = 0; place < whole.Length; place++)
+        int tried = 0;
+        for (int place = 0; place < whole.Length; place += 2, tried++)
         {
             byte[] changed = [.. whole];
-            changed[place] = (byte)"\0\"{]x,\u00ff"u8[place % 7];
+            changed[place] = (byte)"\0\"{]x,\u00ff"u8[tried % 7];
             File.WriteAllBytes(run.Document, changed);
             try
             {
@@ -60,7 +64,7 @@ public sealed class DamagedDocumentTests : IDisposable
                 refused++;
             }
         }
-        Assert.InRange(refused, whole.Length / 2, whole.Length);
+        Assert.InRange(refused, tried / 2, tried);
     }
 
     /// <summary>What is changed, into what, and what the refusal must say.</summary>
@@ -98,6 +102,43 @@ public sealed class DamagedDocumentTests : IDisposable
         Assert.True(place >= 0);
         Assert.Contains(says, Refused(Encoding.UTF8.GetBytes(text[..place] + to + text[(place + from.Length)..])).Message, StringComparison.Ordinal);
     }
+
+    /// <summary>What is changed in the record of a view with counts, and what the refusal must say.</summary>
+    public static TheoryData<Func<ViewProfile, ViewProfile>, string> Shapes => new()
+    {
+        { view => view with { SymbolCounts = SymbolSeries.FromDense(new long[5]) }, "symbolCounts holds symbols outside" },
+        { view => view with { CodeLengths = SymbolSeries.FromPairs([[3, 1], [4, 1]]) }, "codeLengths holds symbols outside" },
+        { view => view with { PairCounts = new Dictionary<string, IReadOnlyList<long[]>> { ["4"] = [[0, 1]] } }, "pairCounts holds no pairs" },
+        { view => view with { PairCounts = new Dictionary<string, IReadOnlyList<long[]>> { ["1"] = [[0, 1], [-1, 1]] } }, "pairCounts holds no pairs" },
+        { view => view with { PairCounts = new Dictionary<string, IReadOnlyList<long[]>> { ["1"] = [[0, 1, 2]] } }, "pairCounts holds no pairs" },
+        { view => view with { PairCounts = new Dictionary<string, IReadOnlyList<long[]>> { ["a"] = [[0, 1]] } }, "pairCounts holds no pairs" },
+        { view => view with { Segments = new SegmentSeries { SegmentBytes = 4096, OwnTableBits = [1, 2], SourceTableBits = [1, 2], PreviousTableBits = [1, 2], DivergenceBits = [0] } }, "differ in length" },
+        {
+            view => view with { TableBlocks = [new TableBlockPrice { BlockBytes = 1, Exact = false, PayloadBits = 1, TableBits = 1, FramingBits = 1, TotalBits = 3, TotalBitsInterval = [1] }] },
+            "totalBitsInterval holds no pair"
+        },
+    };
+
+    [Theory]
+    [MemberData(nameof(Shapes), DisableDiscoveryEnumeration = true)]
+    public void A_record_that_a_drawing_would_stumble_over_is_refused(Func<ViewProfile, ViewProfile> change, string says)
+    {
+        var view = new ViewProfile { View = "bits", AlphabetSize = 4, Symbols = 4, SymbolsInUse = 4, SideBits = 0, RawBits = 8, StoredTotalBits = 32, Orders = [], Codes = [], SymbolBlocks = [] };
+        var good = new SourceProfile { Name = "x", Kind = SourceProfileKind.File, Status = SourceStatus.Profiled, Bytes = 1, Views = [view] };
+        Assert.Null(RecordShape.Fault(good));
+        Assert.Contains(says, RecordShape.Fault(good with { Views = [change(view)] }), StringComparison.Ordinal);
+    }
+
+    [Theory]
+    [InlineData("[[1,2,3]]")]
+    [InlineData("[[1]]")]
+    [InlineData("[[1,2],3]")]
+    [InlineData("[1,\"2\"]")]
+    [InlineData("[1.5]")]
+    [InlineData("{}")]
+    [InlineData("[[[1,2]]]")]
+    public void A_series_is_numbers_or_pairs_of_them(string series) =>
+        Assert.Throws<System.Text.Json.JsonException>(() => System.Text.Json.JsonSerializer.Deserialize(series, RecordJson.Default.SymbolSeries));
 
     [Fact]
     public void A_document_that_is_not_there_or_is_a_folder_is_refused()

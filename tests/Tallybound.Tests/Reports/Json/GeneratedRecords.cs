@@ -69,7 +69,7 @@ internal sealed class GeneratedRecords(int seed)
 
     private ViewProfile View() => new()
     {
-        View = Pick(["bytes", "nibbles", "words-le"]), AlphabetSize = 256, Symbols = Long(), SymbolsInUse = Long(), SideBits = 0, RawBits = Long(), StoredTotalBits = Long(),
+        View = Pick(["bytes", "nibbles", "words-le"]), AlphabetSize = 1 << 17, Symbols = Long(), SymbolsInUse = Long(), SideBits = 0, RawBits = Long(), StoredTotalBits = Long(),
         Orders = Many(0, 3, Order), Codes = Many(0, 4, Code), SymbolBlocks = Many(0, 2, Block),
         Uniformity = Chance(0.5) ? new UniformityProfile(Real(), 255, Real()) : null,
         LimitsNotMet = Chance(0.2) ? [new LimitNotMet(5, 8)] : null,

@@ -7,7 +7,9 @@ namespace Tallybound.Profiling.Corpus;
 /// <summary>Adds records up to the whole of a run. Sums are integers, so the order of records never matters.</summary>
 internal sealed class CorpusBuilder
 {
-    private const int DuplicateSets = 100;
+    /// <summary>Sets of equal sources listed at most.</summary>
+    public const int DuplicateSets = 100;
+
     private const int DuplicateNames = 20;
     private const int AdaptiveOrders = 3;
 
@@ -65,9 +67,10 @@ internal sealed class CorpusBuilder
     }
 
     /// <summary>What the figures say of the whole, by bytes at stake, then by id; of a single source, its own findings. Empty when nothing fires.</summary>
-    public IReadOnlyList<Finding> Findings()
+    /// <param name="corpus">The roll-up of all that was added.</param>
+    public IReadOnlyList<Finding> Findings(CorpusProfile corpus)
     {
-        lock (gate) return findings.Finish();
+        lock (gate) return findings.Finish(corpus);
     }
 
     private long? Adaptive(int order) => anyAdaptive[order] ? adaptiveBits[order] : null;

@@ -24,12 +24,14 @@ internal sealed class CorpusFindings
     }
 
     /// <summary>The run's findings by bytes at stake, then by id. Of a single source they are that source's own, in its order.</summary>
-    public IReadOnlyList<Finding> Finish()
+    /// <param name="corpus">The whole of the run.</param>
+    public IReadOnlyList<Finding> Finish(CorpusProfile corpus)
     {
         if (sourcesRead == 1) return [.. (only.Findings ?? []).Select(finding => finding with { Sources = 1, HeaviestSource = only.Name })];
         var found = new List<Finding>();
         foreach (IFindingRule rule in FindingRules.All)
             if (totals.TryGetValue(rule.Id, out FindingTotal? total)) found.Add(Of(rule, total));
+        if (sourcesRead > 1) found.AddRange(FindingRules.OfCorpus.Select(rule => rule.Judge(corpus)).OfType<Finding>());
         return [.. found.OrderByDescending(finding => finding.BytesAtStake).ThenBy(finding => finding.Id, StringComparer.Ordinal)];
     }
 

@@ -6,11 +6,21 @@ internal static class FindingExclusions
     /// <summary>Groups within which each rule excludes every other one.</summary>
     private static readonly string[][] Groups =
     [
+        // Each proposes something else than one Huffman table, and counts from that table's size or below it.
+        ["own-table-eats-gain", "integer-lengths-lose", "near-constant", "order-1-structure", "statistics-change", "fixed-code-does", "ternary-fits", "another-view", "code-per-source"],
         // Blocks of one size or one table for all: both end where tables stop costing.
         ["table-eats-gain", "static-table-does"],
+        // The best block size and the best stretches take the same changes of statistics in.
+        ["table-eats-gain", "statistics-change"],
+        // Storing saves the table of a code that does not pay for it.
+        ["store-it", "own-table-eats-gain"],
+        ["store-it", "already-dense"],
     ];
 
     private static readonly Dictionary<string, IReadOnlyList<string>> ById = Table();
+
+    /// <summary>Ids that stand in a group.</summary>
+    public static IEnumerable<string> All => ById.Keys;
 
     /// <summary>Ids that a rule excludes, in ordinal order; null: none.</summary>
     public static IReadOnlyList<string>? Of(string id) => ById.GetValueOrDefault(id);

@@ -1,4 +1,5 @@
 using Tallybound.Profiling.Records;
+using Tallybound.Profiling.Wording;
 
 namespace Tallybound.Profiling.Findings;
 
@@ -23,6 +24,9 @@ internal static class FindingMaking
 
     /// <summary>A size in whole bytes.</summary>
     public static FindingEvidence Bytes(string figure, long bits) => new(figure, bits / 8, "bytes");
+
+    /// <summary>What the total of a code is called as a figure.</summary>
+    public static string TotalOf(CodePrice code) => CodeText.Of(CodeChoice.KeyOf(code)) + ", total";
 
     /// <summary>A share in per cent.</summary>
     public static FindingEvidence Share(string figure, double share) => new(figure, Math.Round(100 * share, 6), "%");

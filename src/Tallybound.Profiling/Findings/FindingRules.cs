@@ -12,7 +12,22 @@ internal static class FindingRules
     [
         new TableEatsGain(),
         new OwnTableEatsGain(),
+        new StaticTableDoes(),
+        new IntegerLengthsLose(),
+        new NearConstant(),
+        new LimitCosts(),
+        new LimitCostsNothing(),
+        new Order1Structure(),
+        new StatisticsChange(),
+        new FixedCodeDoes(),
+        new TernaryFits(),
+        new AnotherView(),
+        new AlreadyDense(),
+        new StoreIt(),
     ];
+
+    /// <summary>The rules that judge the whole of a run, in order of their ids.</summary>
+    public static IReadOnlyList<ICorpusRule> OfCorpus { get; } = [new CodePerSource(), new Duplicates()];
 
     /// <summary>A source's findings, the most bytes at stake first, equal ones in the order of <see cref="All"/>; null when there are none.</summary>
     public static IReadOnlyList<Finding>? Of(SourceProfile source)

@@ -23,7 +23,7 @@ internal sealed class TableEatsGain : IFindingRule
         long saved = (point.TotalBits - best.TotalBits) / 8;
         if (best.BlockBytes <= point.BlockBytes || !ViewPrices.Matters(saved, point.TotalBits / 8)) return null;
         string about = point.Exact ? "" : "about ";
-        string block = SizeText.Bytes(point.BlockBytes), larger = SizeText.Bytes(best.BlockBytes);
+        string block = SizeText.Whole(point.BlockBytes), larger = SizeText.Whole(best.BlockBytes);
         return this.Claim(
             $"In table blocks of {block}, tables and framing take {about}{SizeText.Bytes(eaten / 8)} of the {SizeText.Bytes(gain / 8)} that coding saves ({SizeText.Percent((double)eaten / gain)}); in blocks of {larger}, the whole is {SizeText.Bytes(best.TotalBits / 8)} instead of {about}{SizeText.Bytes(point.TotalBits / 8)}, {about}{SizeText.Bytes(saved)} less.",
             saved,

@@ -48,6 +48,9 @@ public sealed record ViewProfile
     /// <summary>The best division found into stretches with a table of their own; null when it was not computed.</summary>
     public AdaptiveSplitProfile? AdaptiveSplit { get; init; }
 
+    /// <summary>What general-purpose codecs make of the same bytes; null when none was run.</summary>
+    public IReadOnlyList<RefereePrice>? Referee { get; init; }
+
     /// <summary>n(s), kept for the sources that have a page.</summary>
     public SymbolSeries? SymbolCounts { get; init; }
 
@@ -68,3 +71,10 @@ public sealed record UniformityProfile(double ChiSquare, int DegreesOfFreedom, d
 /// <param name="LengthLimit">The limit asked for, in bits.</param>
 /// <param name="ShortestPossible">⌈log2 m⌉, the least limit that can.</param>
 public sealed record LimitNotMet(int LengthLimit, int ShortestPossible);
+
+/// <summary>What a general-purpose codec makes of a view's bytes, cut into blocks that are coded apart.</summary>
+/// <param name="Codec">The codec's name, such as <c>zstandard</c>.</param>
+/// <param name="Level">Its level.</param>
+/// <param name="BlockBytes">Bytes of a block before coding; the last one may be shorter.</param>
+/// <param name="Bytes">Bytes of all coded blocks.</param>
+public sealed record RefereePrice(string Codec, int Level, long BlockBytes, long Bytes);

@@ -41,7 +41,8 @@ public static class ProfileRun
             Work(plan, progress, keeper, records, stop);
             ledger.Settle();
             bool complete = !records.AnyStopped;
-            return new RunResult(complete, corpus.Finish(ledger, plan.ExcludedByRule), corpus.Findings(), Provenance(plan, started, complete), ledger, keeper?.Rows());
+            CorpusProfile whole = corpus.Finish(ledger, plan.ExcludedByRule);
+            return new RunResult(complete, whole, corpus.Findings(whole), Provenance(plan, started, complete), ledger, keeper?.Rows());
         }
         catch
         {

@@ -21,6 +21,18 @@ public static class SizeText
         return value.ToString(format, CultureInfo.InvariantCulture) + " " + Units[unit];
     }
 
+    /// <summary>A size that is set, such as a block's, to the last byte in the largest unit of which it is a whole number: <c>64 KiB</c>, <c>1,500 B</c>.</summary>
+    public static string Whole(long bytes)
+    {
+        int unit = 0;
+        while (bytes > 0 && unit < Units.Length - 1 && bytes % 1024 == 0)
+        {
+            bytes /= 1024;
+            unit++;
+        }
+        return Count(bytes) + " " + Units[unit];
+    }
+
     /// <summary>A count with commas between thousands.</summary>
     public static string Count(long count) => count.ToString("N0", CultureInfo.InvariantCulture);
 

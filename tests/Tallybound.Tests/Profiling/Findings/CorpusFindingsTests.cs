@@ -8,11 +8,13 @@ public sealed class CorpusFindingsTests
 {
     private static SourceProfile Short(string name, long table) => Made.Judged(name, Made.View(2000, Made.Code("huffman", 1700, table)));
 
-    private static IReadOnlyList<Finding> RollUp(params SourceProfile[] sources)
+    private static IReadOnlyList<Finding> RollUp(params SourceProfile[] sources) => RollUp(Made.Corpus(sources.Length), sources);
+
+    private static IReadOnlyList<Finding> RollUp(CorpusProfile whole, params SourceProfile[] sources)
     {
         var corpus = new CorpusFindings();
         foreach (SourceProfile source in sources) corpus.Add(source);
-        return corpus.Finish();
+        return corpus.Finish(whole);
     }
 
     [Fact]

@@ -1,3 +1,4 @@
+using Tallybound.Coding.Codes;
 using Tallybound.Profiling.Findings;
 using Tallybound.Profiling.Records;
 using Xunit;
@@ -28,6 +29,21 @@ internal static class Made
     {
         BlockBytes = blockBytes, Exact = true, PayloadBits = 8 * payload, TableBits = 8 * table, FramingBits = 8 * framing, TotalBits = 8 * (payload + table + framing),
         Kinds = new BlockKindCounts(0, 0, 0, 1),
+    };
+
+    /// <summary>Huffman with what the record tells of the commonest symbol's share.</summary>
+    public static CodePrice Huffman(long payload, long table, double? topShare = null, int longest = 12) =>
+        Code("huffman", payload, table) with { RedundancyBoundBitsPerSymbol = topShare + RedundancyBound.Sigma, LongestCode = longest };
+
+    /// <summary>Huffman under a length limit.</summary>
+    public static CodePrice Limited(int limit, long payload, long table, long costBits) =>
+        Code("huffman-limited", payload, table) with { LengthLimit = limit, LimitCostBits = costBits, LongestCode = limit, SymbolsAtLimit = 2 };
+
+    /// <summary>The whole of a run of as many sources.</summary>
+    public static CorpusProfile Corpus(long sources, long raw = 1000, long best = 1000) => new()
+    {
+        Sources = sources, Profiled = sources, Partial = 0, Failed = 0, Skipped = 0, ExcludedByRule = 0, Empty = 0, Bytes = raw,
+        Totals = new Dictionary<string, long> { ["raw"] = raw, ["bestPerSource"] = best }, Verdict = new Verdict("raw", raw, raw, "One sentence."),
     };
 
     public static SourceProfile Source(string name, params ViewProfile[] views) => new()

@@ -16,9 +16,9 @@ public sealed class TableEatsGainTests
         // Payload saves 20,000 bytes; 4,000 + 1,000 of them, a quarter, go to tables and framing.
         Finding finding = Made.Judge(Rule, Curve(Made.Point(4096, 80_000, 4000, 1000), Made.Point(65_536, 80_500, 300, 60), Made.Point(131_072, 81_000, 200, 10)))!;
         Assert.Equal(85_000 - 80_860, finding.BytesAtStake);
-        Assert.Equal("table blocks of 4.00 KiB", finding.Against);
+        Assert.Equal("table blocks of 4 KiB", finding.Against);
         Assert.Equal(25, Made.Figure(finding, "share of the payload's saving that tables and framing take"));
-        Assert.Equal(80_860, Made.Figure(finding, "blocks of 64.0 KiB, total"));
+        Assert.Equal(80_860, Made.Figure(finding, "blocks of 64 KiB, total"));
         Assert.Null(finding.BytesAtStakeInterval);
         Assert.DoesNotContain("about", finding.Claim, StringComparison.Ordinal);
     }
@@ -30,7 +30,7 @@ public sealed class TableEatsGainTests
         Finding finding = Made.Judge(Rule, Curve(estimate, Made.Point(65_536, 80_500, 300, 60)))!;
         Assert.Equal([0, 90_000 - 80_860], finding.BytesAtStakeInterval!);
         Assert.Contains("about", finding.Claim, StringComparison.Ordinal);
-        Assert.Equal(86_000, Made.Figure(finding, "blocks of 4.00 KiB, total, estimated"));
+        Assert.Equal(86_000, Made.Figure(finding, "blocks of 4 KiB, total, estimated"));
     }
 
     [Fact]

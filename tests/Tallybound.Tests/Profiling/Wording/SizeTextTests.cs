@@ -32,4 +32,12 @@ public sealed class SizeTextTests
     [InlineData(0.99999, "99.9 %")]
     [InlineData(1, "100.0 %")]
     public void A_share_has_one_decimal_and_only_the_whole_is_100(double share, string expected) => Assert.Equal(expected, SizeText.Percent(share));
+
+    [Theory]
+    [InlineData(0, "0 B")]
+    [InlineData(1500, "1,500 B")]
+    [InlineData(65_536, "64 KiB")]
+    [InlineData(1_572_864, "1,536 KiB")]
+    [InlineData(1 << 30, "1 GiB")]
+    public void A_size_that_was_set_is_given_to_the_last_byte(long bytes, string expected) => Assert.Equal(expected, SizeText.Whole(bytes));
 }

@@ -24,7 +24,7 @@ internal static class CorpusSizesChart
             ? "No code priced here makes the whole smaller"
             : $"{CodeText.AtTheStart(verdict.Code)} is the smallest single choice: {SizeText.Bytes(verdict.CodedBytes)} of {SizeText.Bytes(verdict.RawBytes)}";
         string alternative = $"{title}. " + string.Join("; ", rows.Select(row => $"{row.Label} {row.Value.Replace("  ", ", ", StringComparison.Ordinal)}")) + ". " + string.Join("; ", bounds.Select(bound => bound.Label)) + ".";
-        return Chart.Of(SizeBars.Draw("sizes", title, $"{unit} of the whole, tables and framing included, a source counting as stored where a code would grow it; raw ÷ coded at the right", alternative, rows, bounds));
+        return Chart.Of(SizeBars.Draw("sizes", title, $"{unit} of the whole, tables and framing included, no source larger than stored; raw ÷ coded at the right", alternative, rows, bounds));
     }
 
     /// <summary>Memoryless codes together, so that their bound spans neighbours.</summary>

@@ -29,7 +29,7 @@ internal static class RatesChart
             : $"{CodeText.AtTheStart(best.Key)} is smallest: {SizeText.Bytes(best.TotalBits / 8)} of {SizeText.Bytes((view.StoredTotalBits + 7) / 8)}, {SizeText.Ratio(view.StoredTotalBits, best.TotalBits)}, table included";
         string alternative = $"{title}. " + string.Join("; ", rows.Select(row => $"{row.Label} {SizeText.Rate(row.Payload + row.Table + row.Framing)}")) + $" {unit}. "
             + string.Join("; ", Bounds(view, codes).Select(bound => $"{bound.Label} {SizeText.Rate(bound.At)}")) + ".";
-        return Chart.Of(SizeBars.Draw("rates", title, $"Payload, table (lighter) and framing (hatched) in {unit}; raw ÷ coded at the right; dark rules are bounds, models left out", alternative, rows, Bounds(view, codes)));
+        return Chart.Of(SizeBars.Draw("rates", title, $"Payload, table (lighter) and framing (hatched) in {unit}; raw ÷ coded at the right; dark rules are bounds", alternative, rows, Bounds(view, codes)));
     }
 
     /// <summary>Binary codes with a total, without limits that cost nothing, memoryless ones first, so that each bound spans neighbours.</summary>

@@ -28,7 +28,7 @@ internal static class SymbolBlockChart
         }
         string title = Title(view, single.TotalBits.Value);
         string alternative = $"{title}. " + string.Join("; ", rows.Select(row => $"{row.Label}: {SizeText.Rate(row.Payload)} payload, {SizeText.Rate(row.Table)} table")) + $" {unit}.";
-        return Chart.Of(SizeBars.Draw("symbol-blocks", title, $"Payload and table (lighter) of Huffman codes for blocks of symbols, in {unit}; dark rules are the entropy of what was coded", alternative, rows, bounds));
+        return Chart.Of(SizeBars.Draw("symbol-blocks", title, $"Payload and table (lighter) of Huffman codes for blocks of symbols, {unit}; dark rules are bounds", alternative, rows, bounds));
     }
 
     private static string Title(ViewProfile view, long singleBits)

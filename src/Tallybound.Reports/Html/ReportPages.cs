@@ -1,3 +1,4 @@
+using System.Runtime.ExceptionServices;
 using Tallybound.Reports.Charts;
 using Tallybound.Reports.Charts.Frame;
 using Tallybound.Reports.Files;
@@ -13,6 +14,7 @@ namespace Tallybound.Reports.Html;
 internal static class ReportPages
 {
     private const int SourcesWithPictures = 10;
+    private const int MostThreads = 4;
 
     /// <summary>Draws it into a run folder.</summary>
     /// <param name="folder">The run folder.</param>
@@ -24,10 +26,20 @@ internal static class ReportPages
         string charts = Path.Combine(folder, "charts"), sources = Path.Combine(folder, "sources");
         Directory.CreateDirectory(charts);
         Directory.CreateDirectory(sources);
-        using var renderer = new PageRenderer();
-        DrawCorpus(folder, charts, content, renderer);
-        foreach (DrawnSource source in content.Drawn)
-            DrawSource(folder, charts, content, source, renderer, pictures == PictureChoice.All || source.Number <= SourcesWithPictures);
+        using (var renderer = new PageRenderer()) DrawCorpus(folder, charts, content, renderer);
+        var threads = new ParallelOptions { MaxDegreeOfParallelism = Math.Clamp(Environment.ProcessorCount, 1, MostThreads) };
+        try
+        {
+            Parallel.ForEach(content.Drawn, threads, static () => new PageRenderer(), (source, _, own) =>
+            {
+                DrawSource(folder, charts, content, source, own, pictures == PictureChoice.All || source.Number <= SourcesWithPictures);
+                return own;
+            }, static own => own.Dispose());
+        }
+        catch (AggregateException failures)
+        {
+            ExceptionDispatchInfo.Throw(failures.InnerExceptions[0]);
+        }
     }
 
     private static void DrawCorpus(string folder, string charts, ReportContent content, PageRenderer renderer)

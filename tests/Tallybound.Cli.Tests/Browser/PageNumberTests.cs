@@ -7,10 +7,10 @@ namespace Tallybound.Cli.Tests.Browser;
 public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposable
 {
     /// <summary>Numbers that each first page of a run with bytes marks at least.</summary>
-    private const int MarkedOnIndex = 0;
+    private const int MarkedOnIndex = 20;
 
     /// <summary>Numbers that each page of a source with bytes marks at least.</summary>
-    private const int MarkedOnSourcePage = 0;
+    private const int MarkedOnSourcePage = 20;
 
     private const string Record = """
         { "corpus": { "bytes": 6707748, "totals": { "huffman": 4621112 }, "bounds": { "order0BoundBits": 36501097 } },
@@ -31,7 +31,7 @@ public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposa
         await Faults.NoneAsync(chromium, run, [new PageView()], async page =>
         {
             (IReadOnlyList<string> faults, int marked) = await PageNumbers.CompareAsync(page, run.Record);
-            int least = run.Bytes == 0 ? 0 : page.File == run.Index ? MarkedOnIndex : MarkedOnSourcePage;
+            int least = run.Bytes == 0 || (await page.AskAsync<string>("() => document.body.textContent")).Contains("nothing to say of sizes", StringComparison.Ordinal) ? 0 : page.File == run.Index ? MarkedOnIndex : MarkedOnSourcePage;
             return marked >= least ? faults : [.. faults, $"only {marked} numbers are marked"];
         });
     }

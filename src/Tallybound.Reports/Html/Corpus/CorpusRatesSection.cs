@@ -28,7 +28,8 @@ internal static class CorpusRatesSection
         return new Table("Sizes of the whole, each source with a table of its own.", [new("code", IsText: true), new($"size, {size.Unit}"), new("bit/byte"), new("raw ÷ coded"), new("saving, %")],
             [.. corpus.Totals.Select(total => new Row(
             [
-                new Cell(CodeText.Of(total.Key)), size.Of(total.Value, "/corpus/totals/" + total.Key), new Cell(SizeText.Rate(8.0 * total.Value / corpus.Bytes)), NumberCells.Ratio(corpus.Bytes, total.Value), Saving(corpus.Bytes, total.Value),
+                new Cell(CodeText.Of(total.Key)), size.Of(total.Value, "/corpus/totals/" + total.Key), new Cell(SizeText.Rate(8.0 * total.Value / corpus.Bytes)) { Record = $"/corpus/totals/{total.Key} over /corpus/bytes", Unit = "bit/byte" },
+                NumberCells.Ratio(corpus.Bytes, total.Value, "/corpus/bytes", "/corpus/totals/" + total.Key), Saving(corpus.Bytes, total.Value, "/corpus/totals/" + total.Key),
             ], total.Key == corpus.Verdict?.Code))]);
     }
 
@@ -45,7 +46,7 @@ internal static class CorpusRatesSection
         return new Table("What the counts alone say, added up over sources. The bound leaves the model out; an adaptive cost leaves nothing out.", [new("figure", IsText: true), new($"{size.Unit}"), new("bit/byte")],
             [.. figures.Where(figure => figure.Bits is not null).Select(figure => new Row(
             [
-                new Cell(figure.Name), size.Of(RatesSection.Bytes(figure.Bits!.Value), "/corpus/bounds/" + figure.Member, "bits"), new Cell(SizeText.Rate((double)figure.Bits.Value / raw)),
+                new Cell(figure.Name), size.Of(RatesSection.Bytes(figure.Bits!.Value), "/corpus/bounds/" + figure.Member), new Cell(SizeText.Rate((double)figure.Bits.Value / raw)),
             ]))]);
     }
 
@@ -54,5 +55,5 @@ internal static class CorpusRatesSection
         [.. new (string, double, string)[] {("5 %", quantiles.P05, "p05"), ("25 %", quantiles.P25, "p25"), ("50 %", quantiles.P50, "p50"), ("75 %", quantiles.P75, "p75"), ("95 %", quantiles.P95, "p95") }
             .Select(quantile => new Row([new Cell(quantile.Item1), NumberCells.Rate(quantile.Item2, "/corpus/quantiles/" + quantile.Item3)]))]);
 
-    private static Cell Saving(long raw, long coded) => new((100.0 * (raw - coded) / raw).ToString("0.0", CultureInfo.InvariantCulture));
+    private static Cell Saving(long raw, long coded, string record) => new((100.0 * (raw - coded) / raw).ToString("0.0", CultureInfo.InvariantCulture)) { Record = $"{record} over /corpus/bytes", Unit = "% saved" };
 }

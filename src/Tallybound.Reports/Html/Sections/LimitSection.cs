@@ -40,8 +40,8 @@ internal static class LimitSection
             {
                 string at = $"{record}/codes/{pair.Index.ToString(CultureInfo.InvariantCulture)}";
                 int limit = pair.Code.LengthLimit!.Value;
-                return new Row([NumberCells.Count(limit, at + "/lengthLimit"), cost.Of(RatesSection.Bytes(pair.Code.LimitCostBits!.Value), at + "/limitCostBits", "bits"), NumberCells.Count(pair.Code.SymbolsAtLimit, at + "/symbolsAtLimit"),
-                    total.Of(RatesSection.Bytes(pair.Code.TotalBits!.Value), at + "/totalBits", "bits"), limit <= LargestOneLevel ? NumberCells.Count(1L << limit) : Cell.Empty]);
+                return new Row([NumberCells.Count(limit, at + "/lengthLimit"), cost.Of(RatesSection.Bytes(pair.Code.LimitCostBits!.Value), at + "/limitCostBits"), NumberCells.Count(pair.Code.SymbolsAtLimit, at + "/symbolsAtLimit"),
+                    total.Of(RatesSection.Bytes(pair.Code.TotalBits!.Value), at + "/totalBits"), limit <= LargestOneLevel ? NumberCells.Count(1L << limit) : Cell.Empty]);
             })]);
     }
 }

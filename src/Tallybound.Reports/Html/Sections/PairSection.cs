@@ -32,7 +32,7 @@ internal static class PairSection
         [.. heaviest.Select(pair => new Row(
         [
             new Cell(SymbolText.Of(view, pair.Before)) { SortKey = pair.Before.ToString(CultureInfo.InvariantCulture) }, new Cell(SymbolText.Of(view, pair.Symbol)) { SortKey = pair.Symbol.ToString(CultureInfo.InvariantCulture) },
-            new Cell(SizeText.Count(pair.Count)) { Record = string.Create(CultureInfo.InvariantCulture, $"{record}/pairCounts/{pair.Before}/{pair.Index}/1"), RecordUnit = "count" },
+            new Cell(SizeText.Count(pair.Count)) { Record = string.Create(CultureInfo.InvariantCulture, $"{record}/pairCounts/{pair.Before}/{pair.Index}/1"), Unit = "count" },
             new Cell((100.0 * pair.Count / (view.Symbols - 1)).ToString("0.00", CultureInfo.InvariantCulture)),
         ]))]);
 

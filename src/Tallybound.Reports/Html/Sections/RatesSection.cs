@@ -45,8 +45,8 @@ internal static class RatesSection
             string key = CodeChoice.KeyOf(code);
             return new Row(
             [
-                new Cell(CodeText.Of(key)), total.Of(Bytes(code.TotalBits), at + "/totalBits", "bits"), payload.Of(Bytes(code.PayloadBits), at + "/payloadBits", "bits"),
-                table.Of(Bytes(code.TableBits), at + "/tableBits", "bits"), framing.Of(Bytes(code.FramingBits), at + "/framingBits", "bits"), NumberCells.Rate(code.BitsPerSymbol, at + "/bitsPerSymbol"),
+                new Cell(CodeText.Of(key)), total.Of(Bytes(code.TotalBits), at + "/totalBits"), payload.Of(Bytes(code.PayloadBits), at + "/payloadBits"),
+                table.Of(Bytes(code.TableBits), at + "/tableBits"), framing.Of(Bytes(code.FramingBits), at + "/framingBits"), NumberCells.Rate(code.BitsPerSymbol, at + "/bitsPerSymbol"),
                 NumberCells.Percent(code.Efficiency, at + "/efficiency"), NumberCells.Count(code.LongestCode, at + "/longestCode"), NumberCells.Count(code.BreakEvenSymbols, at + "/breakEvenSymbols"), new Cell(code.TableFormat ?? ""),
             ], key == best);
         })];

@@ -23,12 +23,11 @@ internal static class SegmentSection
         string message = count < 2
             ? $"The source is one segment of at most {SizeText.Bytes(segments.SegmentBytes)}."
             : $"Of {SizeText.Count(count)} segments the one at byte {SizeText.Count(furthest * segments.SegmentBytes)} is furthest from the whole: {SizeText.Rate(segments.DivergenceBits[furthest])} bits of Jensen–Shannon divergence, on a scale from 0 (alike) to 1 (nothing in common).";
-        var tables = new List<Table> { Costs(segments) };
-        if (view.AdaptiveSplit is { Starts.Count: > 1 } split) tables.Add(Stretches(split, record, sourceBytes));
         return new Section("segments", "Segments and drift", message)
         {
             Charts = [SegmentChart.Of(view, sourceBytes)],
-            Tables = tables,
+            Tables = [Costs(segments)],
+            FoldedTables = view.AdaptiveSplit is { Starts.Count: > 1 } split ? [Stretches(split, record, sourceBytes)] : [],
             HowToRead = "Where the two lines part, the source's one table fits badly. Segments are the unit of statistics: their tables are left out here, so the gap is what tables of their own could save at most, before they are paid for.",
         };
     }

@@ -38,8 +38,8 @@ internal static class SymbolBlockSection
             return new Row(
             [
                 NumberCells.Count(block.BlockLength, at + "/blockLength"), NumberCells.Count(block.Blocks, at + "/blocks"), NumberCells.Count(block.BlocksInUse, at + "/blocksInUse"), NumberCells.Rate(block.BlockEntropyBitsPerSymbol, at + "/blockEntropyBitsPerSymbol"),
-                payload.Of(RatesSection.Bytes(block.Observed.PayloadBits), at + "/observed/payloadBits", "bits"), table.Of(RatesSection.Bytes(block.Observed.TableBits), at + "/observed/tableBits", "bits"),
-                total.Of(RatesSection.Bytes(block.Observed.TotalBits), at + "/observed/totalBits", "bits"), NumberCells.Rate(block.Independent?.ExpectedBitsPerSymbol, at + "/independent/expectedBitsPerSymbol"),
+                payload.Of(RatesSection.Bytes(block.Observed.PayloadBits), at + "/observed/payloadBits"), table.Of(RatesSection.Bytes(block.Observed.TableBits), at + "/observed/tableBits"),
+                total.Of(RatesSection.Bytes(block.Observed.TotalBits), at + "/observed/totalBits"), NumberCells.Rate(block.Independent?.ExpectedBitsPerSymbol, at + "/independent/expectedBitsPerSymbol"),
             ]);
         })];
         return new Table("Symbol blocks, non-overlapping from the start of the source; symbols left over are sent plain and stand in the payload.", columns, rows);

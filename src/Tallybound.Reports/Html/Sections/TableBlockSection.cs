@@ -46,9 +46,9 @@ internal static class TableBlockSection
             string at = $"{record}/tableBlocks/{index.ToString(CultureInfo.InvariantCulture)}";
             return new Row(
             [
-                new Cell(SizeText.Bytes(point.BlockBytes)) { Exact = NumberCells.ExactBytes(point.BlockBytes), Record = at + "/blockBytes", RecordUnit = "bytes", SortKey = point.BlockBytes.ToString(CultureInfo.InvariantCulture) },
-                total.Of(RatesSection.Bytes(point.TotalBits), at + "/totalBits", "bits"), payload.Of(RatesSection.Bytes(point.PayloadBits), at + "/payloadBits", "bits"), tables.Of(RatesSection.Bytes(point.TableBits), at + "/tableBits", "bits"),
-                framing.Of(RatesSection.Bytes(point.FramingBits), at + "/framingBits", "bits"), new Cell(point.LossBits is { } loss && best.TotalBits > 0 ? (100.0 * loss / best.TotalBits).ToString("0.00", CultureInfo.InvariantCulture) : ""),
+                new Cell(SizeText.Bytes(point.BlockBytes)) { Exact = NumberCells.ExactBytes(point.BlockBytes), Record = at + "/blockBytes", Unit = "bytes", SortKey = point.BlockBytes.ToString(CultureInfo.InvariantCulture) },
+                total.Of(RatesSection.Bytes(point.TotalBits), at + "/totalBits"), payload.Of(RatesSection.Bytes(point.PayloadBits), at + "/payloadBits"), tables.Of(RatesSection.Bytes(point.TableBits), at + "/tableBits"),
+                framing.Of(RatesSection.Bytes(point.FramingBits), at + "/framingBits"), new Cell(point.LossBits is { } loss && best.TotalBits > 0 ? (100.0 * loss / best.TotalBits).ToString("0.00", CultureInfo.InvariantCulture) : ""),
                 NumberCells.Count(point.Kinds?.Stored, at + "/kinds/stored"), NumberCells.Count(point.Kinds?.OneSymbol, at + "/kinds/oneSymbol"), NumberCells.Count(point.Kinds?.LastTable, at + "/kinds/lastTable"), NumberCells.Count(point.Kinds?.OwnTable, at + "/kinds/ownTable"),
                 new Cell(Figure(point)), new Cell(point.TableFormat ?? ""),
             ], point == best);

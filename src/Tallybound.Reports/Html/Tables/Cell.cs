@@ -10,11 +10,11 @@ public sealed record Cell(string Text)
     /// <summary>The exact number in words with its unit, where <see cref="Text"/> is rounded.</summary>
     public string? Exact { get; init; }
 
-    /// <summary>Where the number stands in <c>profile.json</c>, as a JSON pointer (RFC 6901); null for figures made of several.</summary>
+    /// <summary>Where the number stands in <c>profile.json</c>, as a JSON pointer (RFC 6901), or two of them with <c>over</c> between; null for other figures.</summary>
     public string? Record { get; init; }
 
-    /// <summary>Unit that the number has in the record: <c>bytes</c>, <c>bits</c>, <c>rate</c>, <c>count</c> or <c>share</c>.</summary>
-    public string? RecordUnit { get; init; }
+    /// <summary>Unit that the text is in, such as <c>MiB</c>, <c>bit/symbol</c>, <c>count</c>, <c>%</c>, <c>×</c>; null where nothing needs it.</summary>
+    public string? Unit { get; init; }
 
     /// <summary>Where a link leads; null: none.</summary>
     public string? Link { get; init; }

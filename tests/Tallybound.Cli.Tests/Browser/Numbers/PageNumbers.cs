@@ -17,7 +17,7 @@ namespace Tallybound.Cli.Tests.Browser.Numbers;
 internal static class PageNumbers
 {
     private const string Script = """
-        () => JSON.stringify([...document.querySelectorAll('[data-record],td[title*="bytes"],th[title*="bytes"]')].map(e =>
+        () => JSON.stringify([...document.querySelectorAll('[data-record],td[title*="byte"],th[title*="byte"]')].map(e =>
           ({ record: e.getAttribute('data-record'), unit: e.getAttribute('data-unit'), text: e.textContent.trim(), title: e.getAttribute('title') })))
         """;
 
@@ -52,14 +52,14 @@ internal static class PageNumbers
         double exact = RecordValue.Of(record, figure.Record!, unit);
         if (!PrintedNumber.Read(figure.Text, unit).Admits(exact)) yield return $"{figure.Record} is {Text(exact)} in {unit}, the page says “{figure.Text}”";
         if (figure.Title is not { Length: > 0 } title || !char.IsAsciiDigit(title[0])) yield break;
-        if (!PrintedNumber.Read(title, unit).Admits(exact)) yield return $"{figure.Record} is {Text(exact)} in {unit}, the title says “{title}”";
+        if (!PrintedNumber.Read(title, PrintedNumber.IsOfBytes(unit) ? "bytes" : unit).Admits(exact)) yield return $"{figure.Record} is {Text(exact)} in {unit}, the title says “{title}”";
     }
 
     private static IEnumerable<string> OfTitle(Figure figure)
     {
         PrintedNumber exact = PrintedNumber.Read(figure.Title!, "bytes");
         if (exact.HalfStep != 0) yield return $"the title “{figure.Title}” rounds";
-        if (!PrintedNumber.Read(figure.Text, "bytes").Admits(exact.Value)) yield return $"the title says “{figure.Title}”, the text “{figure.Text}”";
+        if (!PrintedNumber.Read(figure.Text, figure.Unit ?? "bytes").Admits(exact.Value)) yield return $"the title says “{figure.Title}”, the text “{figure.Text}”";
     }
 
     private static string Text(double value) => value.ToString("R", CultureInfo.InvariantCulture);

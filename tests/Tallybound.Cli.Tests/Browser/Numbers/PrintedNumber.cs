@@ -7,7 +7,7 @@ namespace Tallybound.Cli.Tests.Browser.Numbers;
 /// <param name="Value">The number in its unit.</param>
 /// <param name="HalfStep">Half of the last printed digit, in its unit: the exact number is at most so far away.</param>
 /// <remarks>Printed as <c>["about " | "≈ "] ["−" | "+"] digits [suffix]</c>, thousands parted by a comma, a thin or a narrow space. The suffix may be
-/// left out where the column says it. Units: <c>bytes</c> (suffix <c>bytes</c>, <c>B</c>, <c>KiB</c> … <c>EiB</c>), <c>bits</c>, <c>bit/symbol</c>,
+/// left out where the column says it. Units: <c>bytes</c> (suffix <c>bytes</c>, <c>B</c>, <c>KiB</c> … <c>EiB</c>), <c>KiB</c> … <c>TiB</c> (of a whole column), <c>bits</c>, <c>bit/symbol</c>,
 /// <c>bit/byte</c>, <c>count</c> (no suffix), <c>symbols</c>, <c>×</c>, <c>%</c>, <c>% saved</c> (suffix <c>%</c>), <c>number</c> (no suffix).</remarks>
 internal readonly partial record struct PrintedNumber(double Value, double HalfStep)
 {
@@ -16,6 +16,10 @@ internal readonly partial record struct PrintedNumber(double Value, double HalfS
     private static readonly Dictionary<string, string[]> Suffixes = new(StringComparer.Ordinal)
     {
         ["bytes"] = ["bytes", "byte", .. BinarySteps],
+        ["KiB"] = ["KiB"],
+        ["MiB"] = ["MiB"],
+        ["GiB"] = ["GiB"],
+        ["TiB"] = ["TiB"],
         ["bits"] = ["bits", "bit"],
         ["bit/symbol"] = ["bit/symbol"],
         ["bit/byte"] = ["bit/byte"],
@@ -26,6 +30,9 @@ internal readonly partial record struct PrintedNumber(double Value, double HalfS
         ["% saved"] = ["%"],
         ["number"] = [],
     };
+
+    /// <summary>Whether a unit is one of bytes: <c>bytes</c> itself, or the one that a column's header names.</summary>
+    public static bool IsOfBytes(string unit) => unit == "bytes" || Array.IndexOf(BinarySteps, unit) > 0;
 
     /// <summary>Whether a unit is one of those above.</summary>
     public static bool Knows(string unit) => Suffixes.ContainsKey(unit);
@@ -41,7 +48,7 @@ internal readonly partial record struct PrintedNumber(double Value, double HalfS
         string suffix = match.Groups["suffix"].Value;
         if (!match.Success || suffix.Length > 0 && !Suffixes[unit].Contains(suffix)) throw new FormatException($"“{text.Trim()}” is no number in {unit}");
         string digits = Separator().Replace(match.Groups["digits"].Value, "");
-        double scale = Math.Pow(1024, Math.Max(0, Array.IndexOf(BinarySteps, suffix)));
+        double scale = Math.Pow(1024, Math.Max(0, Array.IndexOf(BinarySteps, suffix.Length > 0 ? suffix : unit)));
         double value = double.Parse(digits, NumberStyles.AllowDecimalPoint, CultureInfo.InvariantCulture) * scale;
         int decimals = digits.Contains('.', StringComparison.Ordinal) ? digits.Length - digits.IndexOf('.', StringComparison.Ordinal) - 1 : 0;
         // Whole bytes, bits and counts are printed in full: nothing is rounded away.

@@ -18,8 +18,9 @@ internal static class RecordValue
         string[] sides = expression.Split(" over ");
         if (sides.Length > 2) throw new FormatException($"{expression} has more than one over");
         bool sizes = unit is "×" or "%" or "% saved" && sides.Length == 2;
-        double top = Sum(record, sides[0], unit switch { "bytes" => Scale.Bytes, "bits" => Scale.Bits, "bit/symbol" or "bit/byte" when sides.Length == 2 => Scale.Bits, _ => sizes ? Scale.Bits : Scale.None });
-        if (unit == "bytes") top = Math.Ceiling(top);
+        bool bytes = PrintedNumber.IsOfBytes(unit);
+        double top = Sum(record, sides[0], unit switch { _ when bytes => Scale.Bytes, "bits" => Scale.Bits, "bit/symbol" or "bit/byte" when sides.Length == 2 => Scale.Bits, _ => sizes ? Scale.Bits : Scale.None });
+        if (bytes) top = Math.Ceiling(top);
         if (sides.Length == 2) top /= Sum(record, sides[1], sizes ? Scale.Bits : Scale.None);
         return unit switch
         {

@@ -42,9 +42,9 @@ public sealed class Picture : IDisposable
         Plot.ScaleFactor = PngScale;
         using SKSurface surface = SKSurface.Create(new SKImageInfo(Width * PngScale, Height * PngScale, SKColorType.Rgba8888, SKAlphaType.Opaque));
         Plot.Render(surface.Canvas, new PixelRect(0, Width * PngScale, Height * PngScale, 0));
-        using SKPixmap pixels = surface.PeekPixels();
+        using SKPixmap pixels = surface.PeekPixels() ?? throw new InvalidOperationException("The picture could not be drawn.");
         // One filter and a low level: a third of the time of the encoder's own choice, files a tenth larger.
-        using SKData data = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.Sub, PngLevel));
+        using SKData data = pixels.Encode(new SKPngEncoderOptions(SKPngEncoderFilterFlags.Sub, PngLevel)) ?? throw new InvalidOperationException("The picture could not be encoded.");
         return png = data.ToArray();
     }
 

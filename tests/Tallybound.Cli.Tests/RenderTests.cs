@@ -63,6 +63,10 @@ public sealed class RenderTests : IDisposable
         Assert.Equal((0, "", ""), (outcome.ExitCode, outcome.Output, outcome.Error));
         Dictionary<string, byte[]> all = Files("run");
         Assert.Empty(usual.Keys.Except(all.Keys));
+        // Fourteen sources have a page, ten of them pictures beside it as a rule.
+        string[] more = [.. all.Keys.Except(usual.Keys)];
+        Assert.NotEmpty(more);
+        Assert.All(more, file => Assert.Matches("^charts/00(11|12|13|14)-.*[.]png$", file));
     }
 
     [Fact]

@@ -26,7 +26,7 @@ internal static class FindingMaking
     public static FindingEvidence Bytes(string figure, long bits) => new(figure, bits / 8, "bytes");
 
     /// <summary>What the total of a code is called as a figure.</summary>
-    public static string TotalOf(CodePrice code) => CodeText.Of(CodeChoice.KeyOf(code)) + ", total";
+    public static string TotalOf(CodePrice code) => CodeText.Of(CodeChoice.KeyOf(code)) + (code.Exact ? ", total" : ", total priced from counts");
 
     /// <summary>A share in per cent.</summary>
     public static FindingEvidence Share(string figure, double share) => new(figure, Math.Round(100 * share, 6), "%");

@@ -15,7 +15,7 @@ internal sealed class FixedCodeDoes : IFindingRule
 
     public Finding? Judge(SourceProfile source, ViewProfile view)
     {
-        if (view.Binary("huffman") is not { TotalBits: { } huffman } || view.Binary("fixed") is not { TotalBits: { } total, LongestCode: { } width }) return null;
+        if (view.SymbolsInUse < 2 || view.Binary("huffman") is not { TotalBits: { } huffman } || view.Binary("fixed") is not { TotalBits: { } total, LongestCode: { } width }) return null;
         if (100 * total > 101 * huffman || 100 * total > 99 * view.StoredTotalBits) return null;
         long saved = (view.StoredTotalBits - total) / 8;
         if (!ViewPrices.Matters(saved, view.StoredTotalBits / 8)) return null;

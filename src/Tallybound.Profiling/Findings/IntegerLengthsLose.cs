@@ -36,5 +36,5 @@ internal sealed class IntegerLengthsLose : IFindingRule
     }
 
     public string ClaimOfMany(FindingTotal total) =>
-        $"{total.Where}, code lengths in whole bits lose 3 % of H0 or more; the cheapest of tANS, range coder and symbol blocks wins {SizeText.Bytes(total.BytesAtStake)} back.";
+        $"{total.Where}, code lengths in whole bits lose 3 % of H0 or more; the cheapest of tANS, range coding and symbol blocks wins {SizeText.Bytes(total.BytesAtStake)} back.";
 }

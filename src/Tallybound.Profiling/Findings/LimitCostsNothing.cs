@@ -15,7 +15,7 @@ internal sealed class LimitCostsNothing : IFindingRule
 
     public Finding? Judge(SourceProfile source, ViewProfile view)
     {
-        if (view.Binary("huffman") is not { LongestCode: { } longest, PayloadBits: { } payload } huffman || !view.IsWorthCoding(huffman)) return null;
+        if (view.SymbolsInUse < 2 || view.Binary("huffman") is not { LongestCode: { } longest, PayloadBits: { } payload } huffman || !view.IsWorthCoding(huffman)) return null;
         CodePrice? least = null;
         for (int i = 0; i < view.Codes.Count; i++)
             if (view.Codes[i] is { LimitCostBits: 0, LengthLimit: not null } code && (least is null || code.LengthLimit < least.LengthLimit)) least = code;

@@ -34,5 +34,5 @@ internal sealed class NearConstant : IFindingRule
     }
 
     public string ClaimOfMany(FindingTotal total) =>
-        $"{total.Where}, one symbol is at least {SizeText.Percent(Math.Floor(10 * total.LeastFigure) / 1000)} of all, and Huffman spends at least 1 bit on each; the cheapest of tANS, range coder and symbol blocks saves {SizeText.Bytes(total.BytesAtStake)}.";
+        $"{total.Where}, one symbol is {(total.LeastFigure >= 100 ? "all there is" : $"at least {SizeText.Percent(Math.Floor(10 * total.LeastFigure) / 1000)} of all")}, and Huffman spends at least 1 bit on each; the cheapest of tANS, range coding and symbol blocks saves {SizeText.Bytes(total.BytesAtStake)}.";
 }

@@ -24,7 +24,7 @@ internal sealed class Order1Structure : IFindingRule
         if (contexts is { TotalBits: { } total } && total <= MostOfPlain * plain.TotalBits)
         {
             return plain.SavedBy(total) is { } saved ? Finding(
-                $"The previous symbol tells about the next: with one Huffman table a previous symbol, the source is {SizeText.Bytes(total / 8)}, tables included, instead of {plain.Words}: {SizeText.Bytes(saved)} less.",
+                $"The previous symbol tells about the next: with a Huffman table per previous symbol, the source is {SizeText.Bytes(total / 8)}, tables included, instead of {plain.Words}: {SizeText.Bytes(saved)} less.",
                 saved) : null;
         }
         if (order1.AdaptiveBitsPerSymbol is not { } rate || rate > MostOfPlain * order0.AdaptiveBitsPerSymbol) return null;
@@ -38,7 +38,7 @@ internal sealed class Order1Structure : IFindingRule
     }
 
     public string ClaimOfMany(FindingTotal total) =>
-        $"{total.Where}, the previous symbol tells about the next; one Huffman table a previous symbol, or an adaptive coder of order 1 where those tables take the gain, saves {SizeText.Bytes(total.BytesAtStake)}.";
+        $"{total.Where}, the previous symbol tells about the next; a Huffman table per previous symbol, or an adaptive coder of order 1 where those tables take the gain, saves {SizeText.Bytes(total.BytesAtStake)}.";
 
     private static List<FindingEvidence> Evidence(OrderProfile order0, OrderProfile order1, OneTable plain, CodePrice? contexts, long symbols)
     {
@@ -51,8 +51,8 @@ internal sealed class Order1Structure : IFindingRule
         evidence.Add(plain.Evidence);
         if (contexts is { TotalBits: { } total, TableBits: { } tables })
         {
-            evidence.Add(Bytes("one table a previous symbol, total", total));
-            evidence.Add(Bytes("one table a previous symbol, tables", tables));
+            evidence.Add(Bytes("Huffman per previous symbol, total", total));
+            evidence.Add(Bytes("Huffman per previous symbol, tables", tables));
         }
         if (order1.AdaptiveBitsPerSymbol is { } rate) evidence.Add(Bytes("adaptive cost of order 1", (((long)Math.Ceiling(rate * symbols) + 7) / 8) * 8));
         return evidence;

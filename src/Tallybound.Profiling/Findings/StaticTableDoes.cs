@@ -21,7 +21,7 @@ internal sealed class StaticTableDoes : IFindingRule
         if (view.Segments is not { } segments || segments.OwnTableBits.Count < LeastSegments) return null;
         if (view.Binary("huffman") is not { TotalBits: { } total } huffman || !view.IsWorthCoding(huffman) || Compared(view) is not { } blocks) return null;
         long own = Sum(segments.OwnTableBits), one = Sum(segments.SourceTableBits);
-        if (100 * one > 101 * own) return null;
+        if (100 * one > 101 * own || 100 * total > 101 * blocks.TotalBits) return null;
         long apart = (blocks.TotalBits - total) / 8, saved = ViewPrices.Matters(apart, blocks.TotalBits / 8) ? apart : 0;
         string size = SizeText.Whole(blocks.BlockBytes);
         return this.Claim(

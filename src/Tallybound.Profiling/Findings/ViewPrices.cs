@@ -19,7 +19,7 @@ internal static class ViewPrices
         return null;
     }
 
-    /// <summary>The cheapest binary code whose lengths are not bound to whole bits a symbol: tANS, range coder, symbol blocks. Null: the view has none.</summary>
+    /// <summary>The cheapest binary code whose lengths are not bound to whole bits a symbol: tANS, range coding, symbol blocks. Null: the view has none.</summary>
     public static CodePrice? CheapestWithoutWholeBits(this ViewProfile view)
     {
         CodePrice? cheapest = null;

@@ -14,7 +14,7 @@ public sealed class CorpusRuleTests
         Finding finding = new CodePerSource().Judge(Coded(60_000, 57_000))!;
         Assert.Equal(3000, finding.BytesAtStake);
         Assert.Equal(3, finding.Sources);
-        Assert.Equal("tANS, priced from counts, for all sources", finding.Against);
+        Assert.Equal("tANS, for all sources", finding.Against);
         Assert.Contains("is 55.7 KiB, tables and framing included, instead of 58.6 KiB with tANS", finding.Claim, StringComparison.Ordinal);
         Assert.Null(new CodePerSource().Judge(Coded(60_000, 59_500)));
         Assert.Null(new CodePerSource().Judge(Coded(60_000, 59_500) with { Verdict = null }));

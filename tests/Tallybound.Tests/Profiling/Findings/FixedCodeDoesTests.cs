@@ -21,9 +21,10 @@ public sealed class FixedCodeDoesTests
     }
 
     [Fact]
-    public void A_skew_that_Huffman_uses_or_an_alphabet_in_full_use_says_nothing()
+    public void A_skew_that_Huffman_uses_or_an_alphabet_in_full_use_or_one_symbol_says_nothing()
     {
         Assert.Null(Made.Judge(Rule, View(25_000, 24_000)));
         Assert.Null(Made.Judge(Rule, View(99_500, 99_400)));
+        Assert.Null(Made.Judge(Rule, View(0, 12_500) with { SymbolsInUse = 1 }));
     }
 }

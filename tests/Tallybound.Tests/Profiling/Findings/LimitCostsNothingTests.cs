@@ -25,8 +25,9 @@ public sealed class LimitCostsNothingTests
     }
 
     [Fact]
-    public void Limits_that_all_cost_or_a_code_of_no_use_say_nothing()
+    public void Limits_that_all_cost_or_a_code_of_no_use_or_one_symbol_say_nothing()
     {
+        Assert.Null(Made.Judge(Rule, Made.View(100_000, Made.Huffman(12_500, 4, longest: 1), Made.Limited(11, 12_500, 4, 0)) with { SymbolsInUse = 1 }));
         Assert.Null(Made.Judge(Rule, Made.View(100_000, Made.Huffman(60_000, 100, longest: 13), Made.Limited(11, 60_010, 100, 80))));
         Assert.Null(Made.Judge(Rule, Made.View(100_000, Made.Huffman(99_500, 100), Made.Limited(12, 99_500, 100, 0))));
     }

@@ -28,6 +28,14 @@ public sealed class NearConstantTests
     }
 
     [Fact]
+    public void Of_many_sources_the_least_share_is_named_and_not_rounded_up()
+    {
+        static FindingTotal Of(double share) => FindingTotal.Of(Made.Source("unit", Made.View(100_000)), Made.Judge(Rule, View(share))!);
+        Assert.Contains("one symbol is at least 95.1 % of all", Rule.ClaimOfMany(Of(0.97).Plus(Of(0.95199))), StringComparison.Ordinal);
+        Assert.Contains("one symbol is all there is", Rule.ClaimOfMany(Of(1).Plus(Of(1))), StringComparison.Ordinal);
+    }
+
+    [Fact]
     public void A_rarer_symbol_or_no_other_coder_says_nothing()
     {
         Assert.Null(Made.Judge(Rule, View(0.89)));

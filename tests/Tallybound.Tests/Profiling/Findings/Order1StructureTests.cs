@@ -15,11 +15,11 @@ public sealed class Order1StructureTests
     };
 
     [Fact]
-    public void One_table_a_previous_symbol_is_charged_with_its_tables()
+    public void A_table_per_previous_symbol_is_charged_with_its_tables()
     {
         Finding finding = Made.Judge(Rule, View(50_000, 2000, 4.2))!;
         Assert.Equal(60_104 - 52_004, finding.BytesAtStake);
-        Assert.Equal(2000, Made.Figure(finding, "one table a previous symbol, tables"));
+        Assert.Equal(2000, Made.Figure(finding, "Huffman per previous symbol, tables"));
         Assert.Equal(4.1, Made.Figure(finding, "held-out, order 1"));
         Assert.Contains("is 50.8 KiB, tables included, instead of 58.7 KiB with one Huffman table", finding.Claim, StringComparison.Ordinal);
     }

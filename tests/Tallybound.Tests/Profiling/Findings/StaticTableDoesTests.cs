@@ -37,6 +37,9 @@ public sealed class StaticTableDoesTests
     }
 
     [Fact]
+    public void Blocks_that_take_1_percent_less_say_nothing() => Assert.Null(Made.Judge(Rule, View(16, 49_600, 50_000, Made.Point(65_536, 791_000, 1000, 100))));
+
+    [Fact]
     public void Own_tables_that_could_save_more_or_few_segments_or_a_code_of_no_use_say_nothing()
     {
         Assert.Null(Made.Judge(Rule, View(16, 49_400, 50_000, Made.Point(65_536, 799_000, 9000, 500))));

@@ -5,7 +5,7 @@ namespace Tallybound.Cli.Tests.Browser;
 /// <summary>Each check of pages finds the fault it is there for, and finds none in a plain page.</summary>
 public sealed class CheckLawTests(Chromium chromium) : IDisposable
 {
-    private const string Plain = "<h1>Doors</h1><p>Door 4 was shut.</p><h2>Sizes</h2><table><caption>Sizes</caption><thead><tr><th scope=\"col\">code</th></tr></thead><tbody><tr><td>12</td></tr></tbody></table>";
+    private const string Plain = MadePage.Plain;
 
     private readonly FreshFolder folder = new();
 
@@ -81,6 +81,5 @@ public sealed class CheckLawTests(Chromium chromium) : IDisposable
         Assert.Contains(await Outline.FaultsAsync(page, numbersInPictures: true), found => found.Contains(fault, StringComparison.Ordinal));
     }
 
-    private Task<OpenPage> OpenAsync(string markup, PageView? view = null) =>
-        chromium.OpenAsync(folder.Write("page.html", System.Text.Encoding.UTF8.GetBytes($"<!DOCTYPE html><html lang=\"en\"><head><meta charset=\"utf-8\"><title>Doors</title></head><body><main>{markup}</main></body></html>")), view);
+    private Task<OpenPage> OpenAsync(string markup, PageView? view = null) => MadePage.OpenAsync(chromium, folder, markup, view);
 }

@@ -28,7 +28,7 @@ public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposa
     public async Task Every_marked_number_is_the_record_s(string name)
     {
         ReportRun run = runs.Of(name);
-        await Faults.NoneAsync(chromium, run, [new PageView()], async page =>
+        await Faults.NoneAsync(chromium, run.Pages, [new PageView()], async page =>
         {
             (IReadOnlyList<string> faults, int marked) = await PageNumbers.CompareAsync(page, run.Record);
             int least = run.Bytes == 0 || (await page.AskAsync<string>("() => document.body.textContent")).Contains("nothing to say of sizes", StringComparison.Ordinal) ? 0 : page.File == run.Index ? MarkedOnIndex : MarkedOnSourcePage;
@@ -100,6 +100,5 @@ public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposa
 
     private static JsonElement Parsed() => JsonSerializer.Deserialize<JsonElement>(Record);
 
-    private Task<OpenPage> OpenAsync(string cell) =>
-        chromium.OpenAsync(folder.Write("page.html", System.Text.Encoding.UTF8.GetBytes($"<!DOCTYPE html><html lang=\"en\"><head><meta charset=\"utf-8\"><title>Doors</title></head><body><table><tr>{cell}</tr></table></body></html>")));
+    private Task<OpenPage> OpenAsync(string cell) => MadePage.OpenAsync(chromium, folder, $"<table><tr>{cell}</tr></table>");
 }

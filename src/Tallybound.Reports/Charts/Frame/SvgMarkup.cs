@@ -25,11 +25,14 @@ internal static class SvgMarkup
             new XAttribute("role", "img"), new XAttribute("aria-label", label),
             new XAttribute("viewBox", string.Create(CultureInfo.InvariantCulture, $"0 0 {width} {height}")),
             new XAttribute("width", width), new XAttribute("height", height));
-        foreach (XElement child in root.Elements()) page.Add(Rewritten(child, idPrefix));
+        // The library numbers ids through the whole process; here they count from 0 in each picture, so that its bytes are the same every time.
+        var ids = new Dictionary<string, string>(StringComparer.Ordinal);
+        foreach (XAttribute id in root.Descendants().Attributes("id")) ids.TryAdd(id.Value, idPrefix + ids.Count.ToString(CultureInfo.InvariantCulture));
+        foreach (XElement child in root.Elements()) page.Add(Rewritten(child, ids));
         return page.ToString(SaveOptions.DisableFormatting);
     }
 
-    private static XElement Rewritten(XElement element, string idPrefix)
+    private static XElement Rewritten(XElement element, Dictionary<string, string> ids)
     {
         var copy = new XElement(element.Name.LocalName);
         foreach (XAttribute attribute in element.Attributes())
@@ -38,17 +41,17 @@ internal static class SvgMarkup
             string name = attribute.Name.Namespace == Link ? "href" : attribute.Name.LocalName;
             string value = name switch
             {
-                "id" => idPrefix + attribute.Value,
+                "id" => ids[attribute.Value],
                 "x" or "y" when element.Name == Svg + "text" => Rounded(First(attribute.Value)),
-                "href" => attribute.Value.StartsWith('#') ? "#" + idPrefix + attribute.Value[1..] : attribute.Value,
-                "clip-path" or "fill" or "stroke" or "mask" => attribute.Value.Replace("url(#", "url(#" + idPrefix, StringComparison.Ordinal),
+                "href" => attribute.Value.StartsWith('#') ? "#" + ids[attribute.Value[1..]] : attribute.Value,
+                _ when attribute.Value.StartsWith("url(#", StringComparison.Ordinal) => $"url(#{ids[attribute.Value[5..^1]]})",
                 "xml:space" => attribute.Value,
                 _ => Rounded(attribute.Value),
             };
             copy.SetAttributeValue(name, value);
         }
         if (element.Name == Svg + "text") copy.Value = element.Value.Trim('\n', '\t', '\r', ' ');
-        else foreach (XElement child in element.Elements()) copy.Add(Rewritten(child, idPrefix));
+        else foreach (XElement child in element.Elements()) copy.Add(Rewritten(child, ids));
         return copy;
     }
 

@@ -11,9 +11,9 @@ namespace Tallybound.Reports.Charts;
 internal static class OrderMultiples
 {
     private const int Across = 5;
-    private const int PanelHeight = 172;
+    private const int PanelHeight = 180;
     private const double PanelWide = 3.6;
-    private const double NameRoom = 0.42;
+    private const double NameRoom = 0.56;
     private const double TickRoom = 0.3;
 
     /// <summary>Draws it.</summary>
@@ -64,6 +64,6 @@ internal static class OrderMultiples
             texts.Add(points[i].X, floor, view.Orders[i].Order.ToString(CultureInfo.InvariantCulture), Alignment.UpperCenter, Tones.Soft, 2);
             texts.Add(points[i].X, points[i].Y, view.Orders[i].AdaptiveBitsPerSymbol!.Value.ToString("0.00", CultureInfo.InvariantCulture), Alignment.LowerCenter, Tones.Dark, -6);
         }
-        texts.Add(left - 0.35, floor + highest * (1 + NameRoom * 0.5), PictureText.Fit(PictureText.Shown(source.Name), 128), Alignment.LowerLeft, Tones.Dark, 0);
+        texts.Add(left - 0.35, floor + highest * (1 + NameRoom * 0.55), PictureText.Fit(PictureText.Shown(source.Name), 128), Alignment.LowerLeft, Tones.Dark, 0);
     }
 }

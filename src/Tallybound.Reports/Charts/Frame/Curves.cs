@@ -84,7 +84,7 @@ internal static class Curves
         };
     }
 
-    private static Color ColorOf(Curve curve) => curve.Kind is CurveKind.Bound ? Tones.Dark : Tones.Full(curve.Family);
+    private static Color ColorOf(Curve curve) => curve.Kind is CurveKind.Bound ? Tones.Dark : curve.Family == CodeFamily.Raw ? Tones.Soft : Tones.Full(curve.Family);
 
     private static void Add(Plot plot, Curve curve)
     {

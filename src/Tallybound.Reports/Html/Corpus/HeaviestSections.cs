@@ -121,7 +121,7 @@ internal static class HeaviestSections
         return point is null || best is null || best.TotalBits == 0 ? "" : (point.Exact ? "" : "about ") + Percent(point.TotalBits - best.TotalBits, best.TotalBits);
     }
 
-    private static string Percent(long part, long whole) => whole == 0 ? "" : (100.0 * part / whole).ToString("0.0", CultureInfo.InvariantCulture).Replace('-', '−');
+    private static string Percent(long part, long whole) => whole == 0 ? "" : (100.0 * part / whole).ToString("0.0;−0.0;0.0", CultureInfo.InvariantCulture);
 
     private readonly record struct Line(Cell Name, ViewProfile View, string Record);
 }

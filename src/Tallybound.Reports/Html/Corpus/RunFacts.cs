@@ -8,6 +8,9 @@ namespace Tallybound.Reports.Html.Corpus;
 /// <summary>What page one says below the findings: what was read, how, and what was not looked at.</summary>
 internal static class RunFacts
 {
+    /// <summary>Name of the fact that tells the plan, times of files included, and so differs between copies of the same bytes.</summary>
+    public const string Manifest = "manifest";
+
     /// <summary>Names and sentences, in reading order.</summary>
     public static IEnumerable<(string Name, string Text)> Of(ReportContent content)
     {
@@ -21,7 +24,7 @@ internal static class RunFacts
         yield return ("blocks", $"sizes are of whole sources with one table each; symbol blocks up to {Number(parameters.BlockLength)}, context orders up to {Number(parameters.Order)}; block sizes of tables are compared below");
         yield return ("views", string.Join(", ", parameters.View) + (parameters.View.Count > 1 ? $"; totals are of the first, {parameters.View[0]}" : ""));
         yield return ("not tested", NotTested(parameters));
-        yield return ("manifest", $"SHA-256 of the plan {content.Run.PlanDigest}");
+        yield return (Manifest, $"SHA-256 of the plan {content.Run.PlanDigest}");
     }
 
     /// <summary>Details of how the run was made; nothing here is a figure.</summary>

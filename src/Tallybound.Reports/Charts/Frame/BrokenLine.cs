@@ -15,8 +15,14 @@ internal sealed class BrokenLine(IReadOnlyList<Coordinates> points, Color color,
     /// <inheritdoc/>
     public IEnumerable<LegendItem> LegendItems => [];
 
-    /// <summary>The points, for tests of what is drawn.</summary>
+    /// <summary>Its points.</summary>
     public IReadOnlyList<Coordinates> Points => points;
+
+    /// <summary>Its colour.</summary>
+    public Color Color => color;
+
+    /// <summary>Length of a dash in pixels at 1×.</summary>
+    public float Dash => dash;
 
     /// <inheritdoc/>
     public AxisLimits GetAxisLimits() => AxisLimits.NoLimits;

@@ -8,7 +8,7 @@ namespace Tallybound.Reports.Charts.Frame;
 internal static class PictureFrame
 {
     /// <summary>Height below the data of one line of tick labels, in pixels at 1×.</summary>
-    public const float TickLine = 24;
+    public const float TickLine = 30;
 
     /// <summary>Room at the figure's lower and right edge.</summary>
     public const float Margin = 14;
@@ -33,6 +33,9 @@ internal static class PictureFrame
             axis.TickLabelStyle.FontSize = PictureText.Size;
             axis.TickLabelStyle.ForeColor = Tones.Soft;
         }
+        // A tick that nobody sees keeps the numbers below the axis clear of those beside it.
+        plot.Axes.Bottom.MajorTickStyle.Length = 6;
+        plot.Axes.Bottom.MajorTickStyle.Color = Colors.Transparent;
         plot.Grid.XAxisStyle.IsVisible = false;
         plot.Grid.YAxisStyle.MajorLineStyle.Color = Tones.Grid;
         plot.Grid.YAxisStyle.MajorLineStyle.Width = 1;

@@ -54,7 +54,7 @@ internal static class Tones
     };
 
     /// <summary>The lighter tone: tables, and the second line of a family.</summary>
-    public static Color Light(CodeFamily family) => Mixed(Full(family), 0.62);
+    public static Color Light(CodeFamily family) => Mixed(Full(family), 0.75);
 
     /// <summary>The family of a code by its name in the record, or by its key in totals.</summary>
     public static CodeFamily FamilyOf(string code) =>

@@ -1,3 +1,4 @@
+using System.Collections.Concurrent;
 using System.Runtime.ExceptionServices;
 using Tallybound.Reports.Charts;
 using Tallybound.Reports.Charts.Frame;
@@ -24,15 +25,16 @@ internal static class ReportPages
     public static void Draw(string folder, ReportContent content, PictureChoice pictures)
     {
         string charts = Path.Combine(folder, "charts"), sources = Path.Combine(folder, "sources");
+        var written = new ConcurrentBag<string>();
         Directory.CreateDirectory(charts);
         Directory.CreateDirectory(sources);
-        using (var renderer = new PageRenderer()) DrawCorpus(folder, charts, content, renderer);
+        using (var renderer = new PageRenderer()) DrawCorpus(folder, charts, content, renderer, written);
         var threads = new ParallelOptions { MaxDegreeOfParallelism = Math.Clamp(Environment.ProcessorCount, 1, MostThreads) };
         try
         {
             Parallel.ForEach(content.Drawn, threads, static () => new PageRenderer(), (source, _, own) =>
             {
-                DrawSource(folder, charts, content, source, own, pictures == PictureChoice.All || source.Number <= SourcesWithPictures);
+                DrawSource(folder, charts, content, source, own, pictures == PictureChoice.All || source.Number <= SourcesWithPictures ? written : null);
                 return own;
             }, static own => own.Dispose());
         }
@@ -40,13 +42,15 @@ internal static class ReportPages
         {
             ExceptionDispatchInfo.Throw(failures.InnerExceptions[0]);
         }
+        DrawnFiles.RemoveOthers(sources, [.. content.Drawn.Select(source => SourceFile.Stem(source) + ".html")]);
+        DrawnFiles.RemoveOthers(charts, written);
     }
 
-    private static void DrawCorpus(string folder, string charts, ReportContent content, PageRenderer renderer)
+    private static void DrawCorpus(string folder, string charts, ReportContent content, PageRenderer renderer, ConcurrentBag<string> written)
     {
         Chart front = CorpusSizesChart.Of(content.Corpus);
         IReadOnlyList<Section> sections = CorpusSections.Of(content);
-        WritePictures(charts, "corpus", [front, .. sections.SelectMany(section => section.Charts)]);
+        WritePictures(charts, "corpus", [front, .. sections.SelectMany(section => section.Charts)], written);
         renderer.Write<CorpusPage>(Path.Combine(folder, "index.html"), new()
         {
             [nameof(CorpusPage.Content)] = content,
@@ -57,7 +61,7 @@ internal static class ReportPages
         front.Picture?.Dispose();
     }
 
-    private static void DrawSource(string folder, string charts, ReportContent content, DrawnSource source, PageRenderer renderer, bool writePictures)
+    private static void DrawSource(string folder, string charts, ReportContent content, DrawnSource source, PageRenderer renderer, ConcurrentBag<string>? written)
     {
         var views = SourceSections.Of(source);
         renderer.Write<SourcePage>(Path.Combine(folder, SourceFile.Of(source)), new()
@@ -69,15 +73,20 @@ internal static class ReportPages
         for (int i = 0; i < views.Count; i++)
         {
             string stem = i == 0 ? SourceFile.Stem(source) : $"{SourceFile.Stem(source)}-{views[i].View.View}";
-            if (writePictures) WritePictures(charts, stem, [.. views[i].Sections.SelectMany(section => section.Charts)]);
+            if (written is not null) WritePictures(charts, stem, [.. views[i].Sections.SelectMany(section => section.Charts)], written);
             Release(views[i].Sections);
         }
     }
 
-    private static void WritePictures(string charts, string stem, IReadOnlyList<Chart> drawn)
+    private static void WritePictures(string charts, string stem, IReadOnlyList<Chart> drawn, ConcurrentBag<string> written)
     {
         foreach (Chart chart in drawn)
-            if (chart.Picture is { } picture) WholeFile.Write(Path.Combine(charts, $"{stem}-{picture.Slug}.png"), stream => stream.Write(picture.ToPng()));
+        {
+            if (chart.Picture is not { } picture) continue;
+            string name = $"{stem}-{picture.Slug}.png";
+            WholeFile.Write(Path.Combine(charts, name), stream => stream.Write(picture.ToPng()));
+            written.Add(name);
+        }
     }
 
     private static void Release(IReadOnlyList<Section> sections)

@@ -19,7 +19,12 @@ public sealed class RunFolderTests
         folder.Write("depot/one", [7]);
         Outcome outcome = BuiltProgram.Run(folder, "profile", "depot");
         Assert.Equal(0, outcome.ExitCode);
-        Assert.Equal(WholeFolder, FilesOf(folder.At("reports", "depot")));
+        string run = folder.At("reports", "depot");
+        Assert.Equal(WholeFolder, FilesOf(run).Where(name => !Directory.Exists(Path.Combine(run, name))));
+        Assert.Equal(["0001-b-skewed-bin.html", "0002-a-log.html", "0003-one.html", "0004-empty.html"], FilesOf(Path.Combine(run, "sources")));
+        string[] charts = FilesOf(Path.Combine(run, "charts"));
+        Assert.Contains("corpus-sizes.png", charts);
+        Assert.Contains("0001-b-skewed-bin-rates.png", charts);
         Assert.Contains("Report: reports/depot/index.html", outcome.Output, StringComparison.Ordinal);
         RunRecordFile record = RunRecordFile.In(folder.At("reports", "depot"));
         Assert.True(record.Complete);

@@ -48,7 +48,7 @@ internal static class ReportPages
 
     private static void DrawCorpus(string folder, string charts, ReportContent content, PageRenderer renderer, ConcurrentBag<string> written)
     {
-        Chart front = CorpusSizesChart.Of(content.Corpus);
+        Chart front = CorpusSections.Front(content);
         IReadOnlyList<Section> sections = CorpusSections.Of(content);
         WritePictures(charts, "corpus", [front, .. sections.SelectMany(section => section.Charts)], written);
         renderer.Write<CorpusPage>(Path.Combine(folder, "index.html"), new()

@@ -1,4 +1,5 @@
 using Tallybound.Reports.Charts;
+using Tallybound.Reports.Charts.Frame;
 using Tallybound.Reports.Html.Sections;
 using Tallybound.Reports.Json;
 
@@ -11,8 +12,8 @@ internal static class CorpusSections
     public static IReadOnlyList<Section> Of(ReportContent content)
     {
         if (content.Corpus.Bytes == 0) return [];
-        IReadOnlyList<DrawnSource> withBytes = [.. content.Drawn.Where(source => source.Profile.Bytes > 0)];
-        if (withBytes.Count == 1) return [.. SourceSections.Of(withBytes[0]).Take(1).SelectMany(view => view.Sections)];
+        IReadOnlyList<DrawnSource> withBytes = WithBytes(content);
+        if (withBytes.Count == 1) return OfOne(withBytes[0]);
         Section ranking = new("ranking", "Heaviest sources", "Where the bytes are, and what each of the heaviest sources is with its own best code.") { Charts = [RankingChart.Of(content.Corpus, content.Listed)] };
         return
         [
@@ -20,4 +21,14 @@ internal static class CorpusSections
             HeaviestSections.Drift(withBytes), HeaviestSections.Symbols(withBytes),
         ];
     }
+
+    /// <summary>The picture of page one: sizes of the whole, or the rates of the one source there is.</summary>
+    public static Chart Front(ReportContent content) =>
+        WithBytes(content) is [{ Profile.Views: [{ Symbols: > 0 } view, ..] }] ? RatesChart.Of(view) : CorpusSizesChart.Of(content.Corpus);
+
+    /// <summary>Its rates are drawn on page one already.</summary>
+    private static IReadOnlyList<Section> OfOne(DrawnSource source) =>
+        [.. SourceSections.Of(source).Take(1).SelectMany(view => view.Sections).Select(section => section.Id == "rates" ? section with { Charts = [] } : section)];
+
+    private static IReadOnlyList<DrawnSource> WithBytes(ReportContent content) => [.. content.Drawn.Where(source => source.Profile.Bytes > 0)];
 }

@@ -20,8 +20,8 @@ internal static class RunFacts
             + (corpus.Empty > 0 ? $"; {SizeText.Count(corpus.Empty)} of them {(corpus.Empty == 1 ? "is" : "are")} empty" : ""));
         yield return ("not read", $"{SizeText.Count(corpus.Failed)} failed, {SizeText.Count(corpus.Skipped)} skipped"
             + (corpus.ExcludedByRule > 0 ? $", {SizeText.Count(corpus.ExcludedByRule)} left out by the globs that were given" : "") + (corpus.Failed + corpus.Partial + corpus.Skipped > 0 ? "; each with its reason below" : ""));
-        yield return ("sampling", "every byte that was read was counted; only table blocks smaller than a segment are estimates from sample windows, and say so");
-        yield return ("blocks", $"sizes are of whole sources with one table each; symbol blocks up to {Number(parameters.BlockLength)}, context orders up to {Number(parameters.Order)}; block sizes of tables are compared below");
+        if (corpus.Bytes > 0) yield return ("sampling", "every byte that was read was counted; only table blocks smaller than a segment are estimates from sample windows, and say so");
+        if (corpus.Bytes > 0) yield return ("blocks", $"sizes are of whole sources with one table each; symbol blocks up to {Number(parameters.BlockLength)}, context orders up to {Number(parameters.Order)}; block sizes of tables are compared below");
         yield return ("views", string.Join(", ", parameters.View) + (parameters.View.Count > 1 ? $"; totals are of the first, {parameters.View[0]}" : ""));
         yield return ("not tested", NotTested(parameters));
         yield return (Manifest, $"SHA-256 of the plan {content.Run.PlanDigest}");

@@ -1,4 +1,3 @@
-using Tallybound.Reports.Charts;
 using Tallybound.Reports.Charts.Frame;
 using Tallybound.Reports.Html.Corpus;
 using Tallybound.Reports.Html.Sections;
@@ -19,7 +18,7 @@ internal static class SamplePictures
     /// <summary>All pictures of the corpus page and of source pages, with the stem of their file.</summary>
     public static IEnumerable<(string Stem, Picture Picture)> All()
     {
-        List<Chart> corpus = [CorpusSizesChart.Of(Content.Corpus), .. CorpusSections.Of(Content).SelectMany(section => section.Charts)];
+        List<Chart> corpus = [CorpusSections.Front(Content), .. CorpusSections.Of(Content).SelectMany(section => section.Charts)];
         foreach (Chart chart in corpus) if (chart.Picture is { } picture) yield return ("corpus", picture);
         foreach (DrawnSource source in Content.Drawn)
             foreach ((_, IReadOnlyList<Section> sections) in SourceSections.Of(source))

@@ -12,6 +12,9 @@ internal static class OrderChart
     /// <summary>Thin mass from which a plug-in figure is drawn broken.</summary>
     public const double ThinFrom = 0.05;
 
+    /// <summary>Savings below this many per cent are called next to nothing.</summary>
+    public const double LeastSaving = 0.5;
+
     /// <summary>Draws it.</summary>
     public static Chart Of(ViewProfile view)
     {
@@ -40,6 +43,7 @@ internal static class OrderChart
         double zero = learned[0].AdaptiveBitsPerSymbol!.Value, least = best.AdaptiveBitsPerSymbol!.Value;
         if (best.Order == 0) return $"Context gains nothing: a coder that learns spends {SizeText.Rate(zero)} {unit} without it, more with it";
         double saving = 100 * (zero - least) / zero;
+        if (saving < LeastSaving) return $"Context gains next to nothing: a coder that learns spends {SizeText.Rate(zero)} {unit} without it, {SizeText.Rate(least)} at best with it";
         return $"{Symbols(best.Order)} of context save a coder that learns {saving.ToString(saving < 10 ? "0.0" : "0", CultureInfo.InvariantCulture)} %: {SizeText.Rate(zero)} to {SizeText.Rate(least)} {unit}";
     }
 

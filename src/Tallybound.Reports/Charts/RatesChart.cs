@@ -26,7 +26,7 @@ internal static class RatesChart
         string unit = Units.OfSymbol(view);
         string title = best.Key == CodeChoice.Stored
             ? "No code priced here makes it smaller once its table is charged"
-            : $"{CodeText.AtTheStart(best.Key)} is smallest: {SizeText.Bytes(best.TotalBits / 8)} of {SizeText.Bytes((view.StoredTotalBits + 7) / 8)}, {SizeText.Ratio(view.StoredTotalBits, best.TotalBits)}, table included";
+            : $"{CodeText.AtTheStart(best.Key)} is smallest: {SizeText.Bytes(best.TotalBits / 8)} of {SizeText.Bytes((view.RawBits + 7) / 8)}, {SizeText.Ratio(view.RawBits, best.TotalBits)}, table included";
         string alternative = $"{title}. " + string.Join("; ", rows.Select(row => $"{row.Label} {SizeText.Rate(row.Payload + row.Table + row.Framing)}")) + $" {unit}. "
             + string.Join("; ", Bounds(view, codes).Select(bound => $"{bound.Label} {SizeText.Rate(bound.At)}")) + ".";
         return Chart.Of(SizeBars.Draw("rates", title, $"Payload, table (lighter) and framing (hatched) in {unit}; raw ÷ coded at the right; dark rules are bounds", alternative, rows, Bounds(view, codes)));
@@ -56,5 +56,5 @@ internal static class RatesChart
         return bounds;
     }
 
-    private static string Value(ViewProfile view, long bits) => $"{SizeText.Bytes((bits + 7) / 8)}  {SizeText.Ratio(view.StoredTotalBits, bits)}";
+    private static string Value(ViewProfile view, long bits) => $"{SizeText.Bytes((bits + 7) / 8)}  {SizeText.Ratio(view.RawBits, bits)}";
 }

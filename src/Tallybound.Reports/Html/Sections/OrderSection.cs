@@ -32,9 +32,9 @@ internal static class OrderSection
         if (learned.Count == 0 || zero.AdaptiveBitsPerSymbol is not { } without) return first + ".";
         OrderProfile best = learned.MinBy(order => order.AdaptiveBitsPerSymbol)!;
         double with = best.AdaptiveBitsPerSymbol!.Value;
-        return with < without
+        return with < without * (1 - OrderChart.LeastSaving / 100)
             ? $"{first}. With {best.Order.ToString(CultureInfo.InvariantCulture)} {(best.Order == 1 ? "symbol" : "symbols")} of context a coder that learns as it goes spends {SizeText.Rate(with)} {unit}, {SizeText.Rate(without - with)} less than without."
-            : $"{first}. Context does not help: a coder that learns as it goes spends {SizeText.Rate(without)} {unit} without it and {SizeText.Rate(with)} with it.";
+            : $"{first}. Context helps little or not at all: a coder that learns as it goes spends {SizeText.Rate(without)} {unit} without it and {SizeText.Rate(with)} with it.";
     }
 
     private static Table Orders(ViewProfile view, string record)

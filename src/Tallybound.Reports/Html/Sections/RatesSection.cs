@@ -17,7 +17,7 @@ internal static class RatesSection
         CodeChoice best = CodeChoice.Cheapest(view);
         string message = best.Key == CodeChoice.Stored
             ? $"As one stored block it is {SizeText.Bytes(Bytes(view.StoredTotalBits))}; every code priced here is larger once its table and framing are charged."
-            : $"Stored it is {SizeText.Bytes(Bytes(view.StoredTotalBits))}; with {CodeText.Of(best.Key)} it is {SizeText.Bytes(Bytes(best.TotalBits))}, table and framing included: {SizeText.Ratio(view.StoredTotalBits, best.TotalBits)}, a saving of {SizeText.Saving(view.StoredTotalBits, best.TotalBits)}.";
+            : $"As it stands it is {SizeText.Bytes(Bytes(view.RawBits))}; with {CodeText.Of(best.Key)} it is {SizeText.Bytes(Bytes(best.TotalBits))}, table and framing included: {SizeText.Ratio(view.RawBits, best.TotalBits)}, a saving of {SizeText.Saving(view.RawBits, best.TotalBits)}.";
         var tables = new List<Table> { Codes(view, record, best.Key) };
         if (view.Codes.Any(code => code.Radix != 2)) tables.Add(OtherRadices(view, record));
         return new Section("rates", "Rates", message)

@@ -53,6 +53,10 @@ public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposa
     [InlineData("/sources/0/views/0/tableBits - /sources/0/views/0/codes/0/payloadBits", "bits", "7", null)]
     [InlineData("#/sources/0/views/0/blocks", "count", "3", null)]
     [InlineData("/sources/0/views/0/blocks/2", "count", "9", "nine")]
+    [InlineData("sum:/sources/0/views/0/blocks", "count", "24", null)]
+    [InlineData("max:/sources/0/views/0/blocks - min:/sources/0/views/0/blocks", "count", "2", null)]
+    [InlineData("/sources/0/views/0/blocks/0 over sum:/sources/0/views/0/blocks", "%", "29.2", null)]
+    [InlineData("sum:/sources/0/views/0/blocks over /sources/0/bytes", "log2", "3.0000", null)]
     [InlineData("/sources/0/views/0/lossBits", "bits", "−15,760", null)]
     public async Task A_number_that_is_the_record_s_passes(string record, string unit, string text, string? title) =>
         Assert.Empty(await FaultsAsync(record, unit, text, title));
@@ -74,6 +78,9 @@ public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposa
     [InlineData("/sources/0/views/0/word", "count", "3", null)]
     [InlineData("/sources/0/views/0/lossBits", "bits", "15,760", null)]
     [InlineData("corpus.bytes", "bytes", "6,707,748", null)]
+    [InlineData("sum:/sources/0/views/0/blocks", "count", "23", null)]
+    [InlineData("sum:/sources/0/bytes", "count", "3", null)]
+    [InlineData("mean:/sources/0/views/0/blocks", "count", "8", null)]
     public async Task A_number_that_is_not_the_record_s_is_found(string record, string unit, string text, string? title) =>
         Assert.NotEmpty(await FaultsAsync(record, unit, text, title));
 
@@ -88,6 +95,14 @@ public sealed class PageNumberTests(Chromium chromium, HardRuns runs) : IDisposa
         await using OpenPage page = await OpenAsync($"<td title=\"{title}\">{text}</td>");
         (IReadOnlyList<string> faults, int marked) = await PageNumbers.CompareAsync(page, Parsed());
         Assert.Equal((good, 0), (faults.Count == 0, marked));
+    }
+
+    /// <summary>Bytes of the source that a page is about, found by its heading.</summary>
+    private static async Task<long> BytesAsync(OpenPage page, ReportRun run)
+    {
+        string heading = await page.AskAsync<string>("() => document.querySelector('h1').textContent.trim()");
+        JsonElement source = run.Record.GetProperty("sources").EnumerateArray().Single(each => HostileNames.Shown(each.GetProperty("name").GetString()!).Trim() == heading);
+        return source.GetProperty("bytes").GetInt64();
     }
 
     private async Task<IReadOnlyList<string>> FaultsAsync(string record, string unit, string text, string? title)

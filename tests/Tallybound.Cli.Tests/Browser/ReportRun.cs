@@ -9,7 +9,7 @@ internal sealed class ReportRun(string folder) : IDisposable
     private const int AllPagesUpTo = 60;
 
     /// <summary>Pages of sources that are looked at where looking takes long.</summary>
-    private const int Some = 8;
+    private const int Some = 6;
 
     private readonly Lazy<JsonDocument> record = new(() => JsonDocument.Parse(File.ReadAllBytes(Path.Combine(folder, "profile.json"))));
 

@@ -39,7 +39,7 @@
         row.hidden = !row.cells[0].textContent.toLowerCase().includes(wanted);
         if (!row.hidden) shown++;
       }
-      found.textContent = wanted === "" ? "" : `${shown} of ${table.tBodies[0].rows.length}`;
+      found.textContent = wanted === "" ? "" : `${shown.toLocaleString("en-GB")} of ${table.tBodies[0].rows.length.toLocaleString("en-GB")}`;
     });
   }
 })();

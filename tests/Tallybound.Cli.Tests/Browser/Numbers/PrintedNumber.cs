@@ -8,7 +8,7 @@ namespace Tallybound.Cli.Tests.Browser.Numbers;
 /// <param name="HalfStep">Half of the last printed digit, in its unit: the exact number is at most so far away.</param>
 /// <remarks>Printed as <c>["about " | "≈ "] ["−" | "+"] digits [suffix]</c>, thousands parted by a comma, a thin or a narrow space. The suffix may be
 /// left out where the column says it. Units: <c>bytes</c> (suffix <c>bytes</c>, <c>B</c>, <c>KiB</c> … <c>EiB</c>), <c>KiB</c> … <c>TiB</c> (of a whole column), <c>bits</c>, <c>bit/symbol</c>,
-/// <c>bit/byte</c>, <c>count</c> (no suffix), <c>symbols</c>, <c>×</c>, <c>%</c>, <c>% saved</c> (suffix <c>%</c>), <c>number</c> (no suffix).</remarks>
+/// <c>bit/byte</c>, <c>count</c> (no suffix), <c>symbols</c>, <c>×</c>, <c>%</c>, <c>% saved</c> (suffix <c>%</c>), <c>log2</c> (of a quotient, no suffix), <c>number</c> (no suffix).</remarks>
 internal readonly partial record struct PrintedNumber(double Value, double HalfStep)
 {
     private static readonly string[] BinarySteps = ["B", "KiB", "MiB", "GiB", "TiB", "PiB", "EiB"];
@@ -28,6 +28,7 @@ internal readonly partial record struct PrintedNumber(double Value, double HalfS
         ["×"] = ["×"],
         ["%"] = ["%"],
         ["% saved"] = ["%"],
+        ["log2"] = [],
         ["number"] = [],
     };
 

@@ -5,7 +5,8 @@ namespace Tallybound.Cli.Tests.Browser.Numbers;
 
 /// <summary>A value that the record holds, or that one step of arithmetic makes of what it holds.</summary>
 /// <remarks><para><c>value = sum [" over " sum]</c>, <c>sum = term {" + " term | " - " term}</c>,
-/// <c>term = JSON pointer into profile.json (RFC 6901) | "#" JSON pointer</c>; <c>#</c> is the number of items of an array.</para>
+/// <c>term = [of] JSON pointer into profile.json (RFC 6901)</c>, <c>of = "#" | "sum:" | "max:" | "min:"</c>: the number of items of an array,
+/// their sum, the greatest, the least.</para>
 /// <para>A term is in bits where the last name in its pointer ends in <c>Bits</c>. Bits become bytes by rounding the whole sum up;
 /// any other term of a value in bytes or bits is in bytes. A quotient of sizes is taken in bits on both sides, save in
 /// <c>bit/symbol</c> and <c>bit/byte</c>, where only the numerator is.</para></remarks>
@@ -17,7 +18,7 @@ internal static class RecordValue
     {
         string[] sides = expression.Split(" over ");
         if (sides.Length > 2) throw new FormatException($"{expression} has more than one over");
-        bool sizes = unit is "×" or "%" or "% saved" && sides.Length == 2;
+        bool sizes = unit is "×" or "%" or "% saved" or "log2" && sides.Length == 2;
         bool bytes = PrintedNumber.IsOfBytes(unit);
         double top = Sum(record, sides[0], unit switch { _ when bytes => Scale.Bytes, "bits" => Scale.Bits, "bit/symbol" or "bit/byte" when sides.Length == 2 => Scale.Bits, _ => sizes ? Scale.Bits : Scale.None });
         if (bytes) top = Math.Ceiling(top);
@@ -26,6 +27,7 @@ internal static class RecordValue
         {
             "%" => 100 * top,
             "% saved" => 100 * (1 - top),
+            "log2" => Math.Log2(top),
             _ => top,
         };
     }
@@ -62,9 +64,29 @@ internal static class RecordValue
 
     private static double Term(JsonElement record, string term)
     {
-        bool count = term.StartsWith('#');
-        string pointer = count ? term[1..] : term;
-        if (!pointer.StartsWith('/')) throw new FormatException($"{term} is no JSON pointer");
+        int start = term.IndexOf('/', StringComparison.Ordinal);
+        if (start < 0) throw new FormatException($"{term} holds no JSON pointer");
+        string pointer = term[start..];
+        JsonElement at = At(record, pointer);
+        string of = term[..start];
+        if (of.Length == 0) return Number(at, pointer);
+        if (at.ValueKind != JsonValueKind.Array) throw new FormatException($"{pointer} is no array");
+        IEnumerable<double> items = at.EnumerateArray().Select(item => Number(item, pointer));
+        return of switch
+        {
+            "#" => at.GetArrayLength(),
+            "sum:" => items.Sum(),
+            "max:" => items.Max(),
+            "min:" => items.Min(),
+            _ => throw new FormatException($"{of} is no word of the grammar"),
+        };
+    }
+
+    private static double Number(JsonElement value, string pointer) =>
+        value.ValueKind == JsonValueKind.Number ? value.GetDouble() : throw new FormatException($"{pointer} is no number");
+
+    private static JsonElement At(JsonElement record, string pointer)
+    {
         JsonElement at = record;
         foreach (string part in pointer[1..].Split('/').Select(part => part.Replace("~1", "/", StringComparison.Ordinal).Replace("~0", "~", StringComparison.Ordinal)))
         {
@@ -78,8 +100,7 @@ internal static class RecordValue
             if (!found) throw new FormatException($"the record holds nothing at {pointer}");
             at = next;
         }
-        if (count) return at.ValueKind == JsonValueKind.Array ? at.GetArrayLength() : throw new FormatException($"{pointer} is no array");
-        return at.ValueKind == JsonValueKind.Number ? at.GetDouble() : throw new FormatException($"{pointer} is no number");
+        return at;
     }
 
     private static string LastName(string pointer) => pointer.Split('/').Last(part => !part.All(char.IsAsciiDigit));

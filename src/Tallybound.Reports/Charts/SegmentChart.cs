@@ -15,7 +15,7 @@ internal static class SegmentChart
     {
         if (view.Segments is not { } segments) return Chart.Instead("No segments were kept for this view.");
         int count = segments.OwnTableBits.Count;
-        if (count < 2) return Chart.Instead($"The source is one segment of {SizeText.Bytes(segments.SegmentBytes)} or less, so nothing can be said of changes along it.");
+        if (count < 2) return Chart.Instead($"The source is one segment of {SizeText.Whole(segments.SegmentBytes)} or less, so nothing can be said of changes along it.");
         long own = segments.OwnTableBits.Sum(), source = segments.SourceTableBits.Sum();
         double loss = own == 0 ? 0 : 100.0 * (source - own) / source;
         IReadOnlyList<long> changes = view.AdaptiveSplit?.Starts ?? [];
@@ -30,9 +30,9 @@ internal static class SegmentChart
             new("source's table", CurveKind.OtherCodedSize, CodeFamily.Huffman, [.. segments.SourceTableBits.Select((bits, index) => new CurvePoint(Middle(index), PerByte(bits, index)))], ScottPlot.MarkerShape.OpenSquare),
             new("own table", CurveKind.CodedSize, CodeFamily.Huffman, [.. segments.OwnTableBits.Select((bits, index) => new CurvePoint(Middle(index), PerByte(bits, index)))]),
         ];
-        string alternative = $"{title}. {SizeText.Count(count)} segments of {SizeText.Bytes(segments.SegmentBytes)}; payload {SizeText.Bytes(own / 8)} under own tables, {SizeText.Bytes(source / 8)} under the source's table"
+        string alternative = $"{title}. {SizeText.Count(count)} segments of {SizeText.Whole(segments.SegmentBytes)}; payload {SizeText.Bytes(own / 8)} under own tables, {SizeText.Bytes(source / 8)} under the source's table"
             + (changes.Count > 1 ? "; changes at byte " + string.Join(", ", changes.Skip(1).Take(12).Select(SizeText.Count)) + (changes.Count > 13 ? $" and {SizeText.Count(changes.Count - 13)} more" : "") : "") + ".";
-        return Chart.Of(Curves.Draw("segments", title, $"Huffman payload in bit/byte of segments of {SizeText.Bytes(segments.SegmentBytes)}, tables left out, by place in the source ({unit}); grey rules are change points",
+        return Chart.Of(Curves.Draw("segments", title, $"Huffman payload in bit/byte of segments of {SizeText.Whole(segments.SegmentBytes)}, tables left out, by place in the source ({unit}); grey rules are change points",
             alternative, curves, PictureFrame.FromZero(sourceBytes / scale, 8), [.. changes.Skip(1).Take(64).Select(start => start / scale)]));
     }
 

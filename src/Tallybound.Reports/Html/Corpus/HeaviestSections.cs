@@ -40,7 +40,7 @@ internal static class HeaviestSections
     public static Section Blocks(IReadOnlyList<DrawnSource> sources)
     {
         List<Line> lines = [.. Lines(sources)];
-        Column[] columns = [new("source", IsText: true), new("best table block", IsText: true), .. UsualBlocks.Select(bytes => new Column($"above it at {SizeText.Bytes(bytes)}, %")), new("best symbol block", IsText: true), new("saves against Huffman, %")];
+        Column[] columns = [new("source", IsText: true), new("best table block", IsText: true), .. UsualBlocks.Select(bytes => new Column($"above it at {SizeText.Whole(bytes)}, %")), new("best symbol block", IsText: true), new("saves against Huffman, %")];
         List<Row> rows = [.. lines.Select(line =>
         {
             TableBlockPrice? best = line.View.TableBlocks is { Count: > 0 } points ? BlockSizeChart.Best(points) : null;
@@ -48,7 +48,7 @@ internal static class HeaviestSections
             long? huffman = line.View.Codes.FirstOrDefault(code => code is { Code: "huffman", Radix: 2 })?.TotalBits;
             return new Row(
             [
-                line.Name, new Cell(best is null ? "" : SizeText.Bytes(best.BlockBytes)) { SortKey = best?.BlockBytes.ToString(CultureInfo.InvariantCulture) },
+                line.Name, new Cell(best is null ? "" : SizeText.Whole(best.BlockBytes)) { SortKey = best?.BlockBytes.ToString(CultureInfo.InvariantCulture) },
                 .. UsualBlocks.Select(bytes => new Cell(Above(line.View, bytes, best))),
                 new Cell(block is null ? "" : $"{block.BlockLength.ToString(CultureInfo.InvariantCulture)} symbols"), new Cell(block is null || huffman is null ? "" : Percent(huffman.Value - block.Observed.TotalBits, huffman.Value)),
             ]);

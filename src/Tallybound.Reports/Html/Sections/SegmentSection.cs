@@ -21,7 +21,7 @@ internal static class SegmentSection
         int count = segments.OwnTableBits.Count, furthest = 0;
         for (int i = 1; i < count; i++) if (segments.DivergenceBits[i] > segments.DivergenceBits[furthest]) furthest = i;
         string message = count < 2
-            ? $"The source is one segment of at most {SizeText.Bytes(segments.SegmentBytes)}."
+            ? $"The source is one segment of at most {SizeText.Whole(segments.SegmentBytes)}."
             : $"Of {SizeText.Count(count)} segments the one at byte {SizeText.Count(furthest * segments.SegmentBytes)} is furthest from the whole: {SizeText.Rate(segments.DivergenceBits[furthest])} bits of Jensen–Shannon divergence, on a scale from 0 (alike) to 1 (nothing in common).";
         return new Section("segments", "Segments and drift", message)
         {

@@ -17,7 +17,7 @@ internal static class TableBlockSection
     {
         if (view.TableBlocks is not { Count: > 0 } points) return null;
         TableBlockPrice best = BlockSizeChart.Best(points);
-        string message = $"In blocks of {SizeText.Bytes(best.BlockBytes)}, each with its cheapest kind of table, the source is {SizeText.Bytes(RatesSection.Bytes(best.TotalBits))}, the least of the sizes tried.";
+        string message = $"In blocks of {SizeText.Whole(best.BlockBytes)}, each with its cheapest kind of table, the source is {SizeText.Bytes(RatesSection.Bytes(best.TotalBits))}, the least of the sizes tried.";
         if (view.AdaptiveSplit is { } split)
         {
             string parts = $"{SizeText.Count(split.Starts.Count)} {(split.Starts.Count == 1 ? "stretch" : "stretches")}";
@@ -46,7 +46,7 @@ internal static class TableBlockSection
             string at = $"{record}/tableBlocks/{index.ToString(CultureInfo.InvariantCulture)}";
             return new Row(
             [
-                new Cell(SizeText.Bytes(point.BlockBytes)) { Exact = NumberCells.ExactBytes(point.BlockBytes), Record = at + "/blockBytes", Unit = "bytes", SortKey = point.BlockBytes.ToString(CultureInfo.InvariantCulture) },
+                new Cell(SizeText.Whole(point.BlockBytes)) { Exact = NumberCells.ExactBytes(point.BlockBytes), Record = at + "/blockBytes", Unit = "bytes", SortKey = point.BlockBytes.ToString(CultureInfo.InvariantCulture) },
                 total.Of(RatesSection.Bytes(point.TotalBits), at + "/totalBits"), payload.Of(RatesSection.Bytes(point.PayloadBits), at + "/payloadBits"), tables.Of(RatesSection.Bytes(point.TableBits), at + "/tableBits"),
                 framing.Of(RatesSection.Bytes(point.FramingBits), at + "/framingBits"), new Cell(point.LossBits is { } loss && best.TotalBits > 0 ? (100.0 * loss / best.TotalBits).ToString("0.00", CultureInfo.InvariantCulture) : ""),
                 NumberCells.Count(point.Kinds?.Stored, at + "/kinds/stored"), NumberCells.Count(point.Kinds?.OneSymbol, at + "/kinds/oneSymbol"), NumberCells.Count(point.Kinds?.LastTable, at + "/kinds/lastTable"), NumberCells.Count(point.Kinds?.OwnTable, at + "/kinds/ownTable"),

@@ -64,6 +64,7 @@ internal static class HeaviestSections
     public static Section Drift(IReadOnlyList<DrawnSource> sources)
     {
         List<Line> lines = [.. Lines(sources).Where(line => line.View is { Segments: not null, AdaptiveSplit: not null })];
+        if (lines.Count == 0) return new Section("segments", "Segments and drift", "None of the heaviest sources is longer than one segment, so nothing can be said of change within them.");
         Column[] columns = [new("source", IsText: true), new("segments"), new("stretches found"), new("split saves against one table, %"), new("greatest divergence, bits")];
         List<Row> rows = [.. lines.Select(line =>
         {
